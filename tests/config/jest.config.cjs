@@ -1,0 +1,12 @@
+/** Types are checked by `npm run types`; here files are only translated, so that tests start quickly. */
+module.exports = {
+  rootDir: "../..",
+  testMatch: ["<rootDir>/tests/**/*.test.ts"],
+  testEnvironment: "node",
+  transform: {
+    "\\.ts$": [
+      "ts-jest",
+      { tsconfig: { target: "ES2022", module: "CommonJS", isolatedModules: true, esModuleInterop: true, resolveJsonModule: true }, diagnostics: false },
+    ],
+  },
+};
