@@ -74,7 +74,11 @@ export function requireIn(allowed: Domain, parameter: string, value: number): vo
  *
  * @throws DomainError listing the words
  */
-export function requireOneOf<T extends string>(words: readonly T[], parameter: string, value: string): asserts value is T {
+export function requireOneOf<T extends string>(
+  words: readonly T[],
+  parameter: string,
+  value: string,
+): asserts value is T {
   if (!(words as readonly string[]).includes(value)) {
     throw new DomainError(parameter, value, words.map((word) => `"${word}"`).join(", "));
   }

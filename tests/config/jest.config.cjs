@@ -6,7 +6,16 @@ module.exports = {
   transform: {
     "\\.ts$": [
       "ts-jest",
-      { tsconfig: { target: "ES2022", module: "CommonJS", isolatedModules: true, esModuleInterop: true, resolveJsonModule: true }, diagnostics: false },
+      {
+        tsconfig: {
+          target: "ES2022",
+          module: "CommonJS",
+          isolatedModules: true,
+          esModuleInterop: true,
+          resolveJsonModule: true,
+        },
+        diagnostics: false,
+      },
     ],
   },
 };

@@ -1,0 +1,189 @@
+import { contains, type Domain } from "../model/domain";
+import { allBlank, isBlank } from "./argument";
+import { CellError, wrongInput } from "./cell-error";
+import { closest } from "./spelling";
+
+/** What one column of a labelled table holds. */
+export type Column =
+  | { readonly kind: "number"; readonly domain: Domain; readonly optional?: boolean; readonly fallback?: number }
+  | { readonly kind: "text"; readonly optional?: boolean; readonly fallback?: string }
+  | {
+      readonly kind: "choice";
+      readonly words: readonly string[];
+      readonly optional?: boolean;
+      readonly fallback?: string;
+    };
+
+export type Schema = Readonly<Record<string, Column>>;
+
+/** A wrong cell of a table: which row (1 is the heading) and column, and why. */
+export interface Problem {
+  readonly row: number;
+  readonly column: string;
+  readonly message: string;
+}
+
+/** A labelled table, read by its schema. */
+export interface TableRows {
+  /** Rows that hold data, blank rows dropped, rows with problems included. */
+  readonly count: number;
+  /** Row of the range that each data row came from, the heading being row 1. */
+  readonly rowNumbers: readonly number[];
+  /** Columns of the schema that the table has. */
+  readonly present: ReadonlySet<string>;
+  readonly problems: readonly Problem[];
+  /** Numbers of a column; NaN where an optional cell without default is blank or the cell is wrong. */
+  numbers(column: string): Float64Array;
+  /** Texts of a column; "" where an optional cell without default is blank or the cell is wrong. */
+  texts(column: string): readonly string[];
+}
+
+type Cells = readonly (readonly unknown[])[];
+
+/** Where each column of the schema stands in the heading row. */
+function headings(cells: Cells, table: string, schema: Schema): Map<string, number> {
+  const names = Object.keys(schema);
+  const byLower = new Map(names.map((name) => [name.toLowerCase(), name]));
+  const found = new Map<string, number>();
+  const others: string[] = [];
+  cells[0]!.forEach((heading, c) => {
+    if (isBlank(heading) || heading === 0) return;
+    const text = String(heading).trim();
+    const name = byLower.get(text.toLowerCase());
+    if (name === undefined) others.push(text);
+    else if (found.has(name)) throw wrongInput(`${table} has the column ${name} twice.`);
+    else found.set(name, c);
+  });
+  const absent = names.filter((name) => !found.has(name));
+  for (const other of others) {
+    const meant = closest(other, absent);
+    if (meant !== undefined) {
+      throw wrongInput(
+        `${table} column "${other}" looks like ${meant}, misspelt; correct it, or rename it if it is your own.`,
+      );
+    }
+  }
+  const missing = absent.filter((name) => !schema[name]!.optional);
+  if (missing.length > 0) {
+    throw wrongInput(`${table} lacks the column ${missing.join(", ")}; its first row must hold the column names.`);
+  }
+  return found;
+}
+
+function allowedWords(column: Column): string {
+  if (column.kind === "number") return column.domain.words;
+  return column.kind === "text" ? "a text" : column.words.map((word) => `"${word}"`).join(", ");
+}
+
+/**
+ * Reads a labelled table: first row the column names in any order, further columns ignored, blank rows dropped.
+ * Cells that are wrong are collected as problems, so that a caller can answer the other rows.
+ *
+ * @throws CellError where the heading itself is wrong
+ */
+export function readTable(cells: Cells, table: string, schema: Schema): TableRows {
+  if (cells.length === 0 || cells[0]!.every((cell) => isBlank(cell) || cell === 0)) {
+    throw wrongInput(`${table} is empty; its first row must hold the column names.`);
+  }
+  const found = headings(cells, table, schema);
+  const used = [...found].map(([name, at]) => ({ name, at, column: schema[name]! }));
+  const zeroIsMissing = used.map(({ column }) => column.kind !== "number" || !contains(column.domain, 0));
+  const rowNumbers: number[] = [];
+  for (let r = 1; r < cells.length; r++) {
+    const row = cells[r]!;
+    // A first filled cell settles it for almost every row.
+    const first = row[used[0]!.at];
+    if (!isBlank(first) && first !== 0) rowNumbers.push(r + 1);
+    else if (
+      !allBlank(
+        used.map(({ at }) => row[at]),
+        zeroIsMissing,
+      )
+    )
+      rowNumbers.push(r + 1);
+  }
+  const count = rowNumbers.length;
+  const problems: Problem[] = [];
+  const numbers = new Map<string, Float64Array>();
+  const texts = new Map<string, string[]>();
+  for (const [name, column] of Object.entries(schema)) {
+    const at = found.get(name);
+    if (column.kind === "number") {
+      const values = new Float64Array(count).fill(column.fallback ?? NaN);
+      if (at !== undefined) readNumbers(cells, rowNumbers, at, name, column, values, problems);
+      numbers.set(name, values);
+    } else {
+      const values = new Array<string>(count).fill(column.fallback ?? "");
+      if (at !== undefined) readTexts(cells, rowNumbers, at, name, column, values, problems);
+      texts.set(name, values);
+    }
+  }
+  problems.sort((a, b) => a.row - b.row);
+  return {
+    count,
+    rowNumbers,
+    present: new Set(found.keys()),
+    problems: problems.map((p) => ({ ...p, message: `${table} row ${p.row}, column ${p.column}: ${p.message}` })),
+    numbers: (column) => numbers.get(column)!,
+    texts: (column) => texts.get(column)!,
+  };
+}
+
+type NumberColumn = Extract<Column, { kind: "number" }>;
+
+function readNumbers(
+  cells: Cells,
+  rowNumbers: readonly number[],
+  at: number,
+  name: string,
+  column: NumberColumn,
+  values: Float64Array,
+  problems: Problem[],
+): void {
+  const zeroIsMissing = !contains(column.domain, 0);
+  rowNumbers.forEach((row, i) => {
+    const cell = cells[row - 1]![at];
+    if (typeof cell === "number" && contains(column.domain, cell)) values[i] = cell;
+    else if (isBlank(cell) || (cell === 0 && zeroIsMissing)) {
+      if (!column.optional) problems.push({ row, column: name, message: `missing; allowed: ${allowedWords(column)}.` });
+    } else {
+      values[i] = NaN;
+      problems.push({ row, column: name, message: `${shown(cell)} is not allowed; allowed: ${allowedWords(column)}.` });
+    }
+  });
+}
+
+function readTexts(
+  cells: Cells,
+  rowNumbers: readonly number[],
+  at: number,
+  name: string,
+  column: Exclude<Column, NumberColumn>,
+  values: string[],
+  problems: Problem[],
+): void {
+  const words = column.kind === "choice" ? new Map(column.words.map((word) => [word.toLowerCase(), word])) : undefined;
+  rowNumbers.forEach((row, i) => {
+    const cell = cells[row - 1]![at];
+    if (isBlank(cell) || cell === 0) {
+      if (!column.optional) problems.push({ row, column: name, message: `missing; allowed: ${allowedWords(column)}.` });
+      return;
+    }
+    // Names such as area 12 are often typed as numbers.
+    const text = typeof cell === "number" && !words ? String(cell) : typeof cell === "string" ? cell.trim() : undefined;
+    const value = text === undefined ? undefined : words ? words.get(text.toLowerCase()) : text;
+    if (value !== undefined) values[i] = value;
+    else
+      problems.push({ row, column: name, message: `${shown(cell)} is not allowed; allowed: ${allowedWords(column)}.` });
+  });
+}
+
+function shown(cell: unknown): string {
+  if (cell instanceof CellError) return `the error ${cell.code} (${cell.message})`;
+  return typeof cell === "string" ? `the text "${cell.slice(0, 40)}"` : String(cell);
+}
+
+/** A table as cells: the column names, then the rows. */
+export function labelled(names: readonly string[], rows: Iterable<readonly unknown[]>): unknown[][] {
+  return [[...names], ...Array.from(rows, (row) => [...row])];
+}
