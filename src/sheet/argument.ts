@@ -27,7 +27,7 @@ function matrix(cells: Cells): readonly (readonly unknown[])[] {
   if (cells === null || cells === undefined) return [[null]];
   if (!Array.isArray(cells)) return [[cells]];
   if (cells.length === 0 || !Array.isArray(cells[0]) || cells[0].length === 0) return [[null]];
-  return cells;
+  return cells as readonly (readonly unknown[])[];
 }
 
 const bits = new DataView(new ArrayBuffer(8));

@@ -52,3 +52,29 @@ export function textOf(name: string): FunctionText | undefined {
 export function registeredIds(): string[] {
   return [...functions.keys()];
 }
+
+type Declared = (...args: any[]) => unknown; // eslint-disable-line @typescript-eslint/no-explicit-any
+
+/**
+ * Registers every declared function with its texts.
+ *
+ * @returns the registered functions by id
+ */
+export function registerAll(
+  declared: Readonly<Record<string, Declared>>,
+  described: readonly FunctionText[],
+): Readonly<Record<string, RegisteredFunction>> {
+  const table: Record<string, RegisteredFunction> = {};
+  for (const text of described) {
+    const fn = declared[text.id];
+    if (!fn) throw new Error(`${text.id} has texts but no function`);
+    const entry: RegisteredFunction = {
+      id: text.id,
+      parameters: text.parameters.map(({ name, optional }) => ({ name, optional })),
+      call: (args) => fn(...args) as unknown[][],
+    };
+    register(entry, text);
+    table[text.id] = entry;
+  }
+  return table;
+}

@@ -72,7 +72,7 @@ function readParallel(
   const lists = new Map(named.map(([name]) => [name, [] as number[]]));
   const places: number[] = [];
   for (let p = 0; p < size; p++) {
-    const cellOf = (i: number): unknown => (flat[i] ? flat[i]![p] : named[i]![1].cells[0]![0]);
+    const cellOf = (i: number): unknown => (flat[i] ? flat[i][p] : named[i]![1].cells[0]![0]);
     if (deciding.length > 0 && allBlank(deciding.map(cellOf), zeroIsMissing)) continue;
     places.push(p);
     named.forEach(([name, argument], i) => {
