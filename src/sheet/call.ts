@@ -83,8 +83,7 @@ function prepare(named: Named): Call | CellError {
     if (whole.blank) {
       if (required.every(([, argument]) => isBlank(cellAt(argument, r, c)) || cellAt(argument, r, c) === 0)) return "";
       const missing = named.find(([name]) => (whole.values.get(name) as unknown[] | undefined)?.length === 0)!;
-      // With every range blank the formula was filled ahead of its data.
-      return ranges.length === 0 ? "" : wrongInput(`${missing[0]} is missing; allowed: ${missing[1].words}.`);
+      return wrongInput(`${missing[0]} is missing; allowed: ${missing[1].words}.`);
     }
     for (const i of places) {
       const argument = named[i]![1];
