@@ -38,11 +38,16 @@ function logGammaNearTwo(z: number): number {
   return z * (ONE_MINUS_EULER + z * sum);
 }
 
+/** ln gamma(1 + x) for x above -1, to full relative accuracy as x goes to 0. */
+export function logGammaOnePlus(x: number): number {
+  return Math.abs(x) <= 0.5 ? logGammaNearTwo(x) - Math.log1p(x) : logGamma(1 + x);
+}
+
 /** Natural logarithm of the gamma function for x above 0. Relative error about 1e-15, at its zeros 1 and 2 included. */
 export function logGamma(x: number): number {
   if (x >= STIRLING_FROM) return (x - 0.5) * Math.log(x) - x + HALF_LOG_TWO_PI + stirlingSeries(x);
-  if (x < 0.5) return logGamma(1 + x) - Math.log(x);
-  if (x < 1.5) return logGammaNearTwo(x - 1) - Math.log1p(x - 1);
+  if (x < 0.5) return logGammaOnePlus(x) - Math.log(x);
+  if (x < 1.5) return logGammaOnePlus(x - 1);
   let product = 1;
   let reduced = x;
   while (reduced > 2.5) {
