@@ -1,13 +1,9 @@
 import { decibel, domain, requireIn, share } from "../domain";
 import { NoAnswerError } from "../errors";
+import { pathLossExponent as exponents } from "../interference/hexagon";
 import { density, upperTail } from "../numerics/normal";
 import { legendre } from "../numerics/quadrature";
-import {
-  clusterSize as clusterSizes,
-  localSinr,
-  pathLossExponent as exponents,
-  type LocalSinr,
-} from "./co-channel-lattice";
+import { latticeCluster, localSinr, type LocalSinr } from "./local-sinr";
 import {
   attenuationFactor,
   DEFAULT_ATTENUATION,
@@ -26,10 +22,15 @@ const WIDEST_PANEL = 20 * NEPERS_PER_DB;
 const NORMAL_REACH = 6;
 /** The innermost e^-24 of the cell's area takes the SINR of its rim. */
 const INNERMOST = -12;
-const CORNER = Math.PI / 6;
+const SIXTH = Math.PI / 3;
 const APOTHEM = Math.sqrt(3) / 2;
 /** Area of the sixth of the hexagon between two corners. */
-const SIXTH = Math.sqrt(3) / 4;
+const SIXTH_AREA = Math.sqrt(3) / 4;
+
+/** Logarithm of the distance from the site to the edge of the hexagon, over its corner radius. */
+function edgeOf(angle: number): number {
+  return Math.log(APOTHEM / Math.cos(angle - SIXTH * Math.round(angle / SIXTH)));
+}
 
 /** The link curve of `RATE.ATTENUATED` in natural units. */
 interface LinkCurve {
@@ -144,7 +145,7 @@ function averagesOver(sinr: LocalSinr, curve: LinkCurve, deviation: number, deta
   const addRay = (angle: number, weight: number): void => {
     const cosine = Math.cos(angle);
     const sine = Math.sin(angle);
-    const edge = Math.log(APOTHEM / cosine);
+    const edge = edgeOf(angle);
     const atEdge = sinr.at(edge, cosine, sine);
     const atCore = sinr.at(INNERMOST, cosine, sine);
     let inner = INNERMOST;
@@ -171,39 +172,38 @@ function averagesOver(sinr: LocalSinr, curve: LinkCurve, deviation: number, deta
     }
   };
 
-  const edges = directionsOfKinks(sinr, curve);
   const angular = legendre(10 * detail);
-  for (let k = 1; k < edges.length; k++) {
-    const half = 0.5 * (edges[k]! - edges[k - 1]!);
-    const middle = 0.5 * (edges[k]! + edges[k - 1]!);
-    for (let n = 0; n < angular.nodes.length; n++) {
-      addRay(middle + half * angular.nodes[n]!, (half * angular.weights[n]!) / SIXTH);
+  let width = 0;
+  for (const [from, to] of sinr.directions) {
+    width += to - from;
+    const ends = splitAtKinks(sinr, curve, from, to);
+    for (let k = 1; k < ends.length; k++) {
+      const half = 0.5 * (ends[k]! - ends[k - 1]!);
+      const middle = 0.5 * (ends[k]! + ends[k - 1]!);
+      for (let n = 0; n < angular.nodes.length; n++) {
+        addRay(middle + half * angular.nodes[n]!, half * angular.weights[n]!);
+      }
     }
   }
-  const symmetry = sinr.mirrored ? 2 : 1;
-  return {
-    efficiency: symmetry * total.efficiency,
-    served: symmetry * total.served,
-    seconds: symmetry * total.seconds,
-  };
+  const area = (SIXTH_AREA * width) / SIXTH;
+  return { efficiency: total.efficiency / area, served: total.served / area, seconds: total.seconds / area };
 }
 
-/** Ends of the sixth (or of its half) and the directions in which the cell's edge has the SINR of a kink. */
-function directionsOfKinks(sinr: LocalSinr, { lower, upper }: LinkCurve): number[] {
+/** The two ends and the directions between them in which the cell's edge has the SINR of the jump or of the kink. */
+function splitAtKinks(sinr: LocalSinr, { lower, upper }: LinkCurve, from: number, to: number): number[] {
   const LOOKS = 16;
-  const start = sinr.mirrored ? 0 : -CORNER;
-  const onEdge = (angle: number): number =>
-    sinr.at(Math.log(APOTHEM / Math.cos(angle)), Math.cos(angle), Math.sin(angle));
-  const found = [start];
-  let before = onEdge(start);
+  const onEdge = (angle: number): number => sinr.at(edgeOf(angle), Math.cos(angle), Math.sin(angle));
+  const found = [from];
+  let last = from;
+  let before = onEdge(from);
   for (let k = 1; k <= LOOKS; k++) {
-    const angle = start + ((CORNER - start) * k) / LOOKS;
+    const angle = from + ((to - from) * k) / LOOKS;
     const value = onEdge(angle);
     for (const level of upper > lower ? [lower, upper] : [lower]) {
       if (before > level === value > level) continue;
-      let low = start + ((CORNER - start) * (k - 1)) / LOOKS;
+      let low = last;
       let high = angle;
-      // Halving: nine digits of the direction, kinks being all that is at stake.
+      // Halving: nine digits of the direction, a split beside the kink being all that is at stake.
       for (let step = 0; step < 30; step++) {
         const middle = 0.5 * (low + high);
         if (onEdge(middle) > level === before > level) low = middle;
@@ -211,9 +211,10 @@ function directionsOfKinks(sinr: LocalSinr, { lower, upper }: LinkCurve): number
       }
       found.push(low);
     }
+    last = angle;
     before = value;
   }
-  found.push(CORNER);
+  found.push(to);
   return found.sort((a, b) => a - b);
 }
 
@@ -258,7 +259,7 @@ const memory = new Map<string, Averages>();
 
 function remembered(parameters: CellParameters): Averages {
   requireIn(exponents, "pathLossExponent", parameters.pathLossExponent);
-  requireIn(clusterSizes, "clusterSize", parameters.clusterSize);
+  requireIn(latticeCluster, "clusterSize", parameters.clusterSize);
   requireIn(share, "load", parameters.load);
   if (parameters.edgeSnrDb !== undefined) requireIn(decibel, "edgeSnrDb", parameters.edgeSnrDb);
   requireIn(shadowingDeviation, "shadowingDb", parameters.shadowingDb);
@@ -283,11 +284,12 @@ function remembered(parameters: CellParameters): Averages {
  * error below 1e-5.
  *
  * @param pathLossExponent 1 to 10
- * @param clusterSize 1, 3, 4, 7, 9, 12, 13, ...: i^2 + i j + j^2, at most 10 000
- * @param sectors 1, 3 or 6: one in `sectors` of the interferers is heard
+ * @param clusterSize 1, 3, 4, 7, 9, 12, 13, ...: i^2 + i j + j^2, at most a million
+ * @param sectors 1, 3 or 6, ideal beams that point alike at every site
  * @param load share of the time that interferers send, 0 to 1
  * @param edgeSnrDb median signal to noise at the corner of the hexagon; left out: no noise
- * @param shadowingDb standard deviation of the SINR around its local median, 0 to 20
+ * @param shadowingDb standard deviation of the SINR around its local median, 0 to 20; the user stays with the site in whose
+ *   hexagon it stands
  * @param attenuation, minimumDb, maximumBpsHz link curve as in `rate.attenuated`
  */
 export function cellEfficiency(
