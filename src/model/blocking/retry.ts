@@ -27,10 +27,10 @@ export function offered(firstTrafficE: number, channels: number, retryShare: num
   if (firstTrafficE === 0 || retryShare === 0) return firstTrafficE;
   if (channels === 0 && retryShare < 1) return firstTrafficE / (1 - retryShare);
   const excess = (a: number): number => (1 - retryShare) * a + retryShare * carriedOf(a, channels) - firstTrafficE;
-  const bracket =
-    retryShare === 1 && firstTrafficE >= channels
-      ? undefined
-      : bracketAround(excess, firstTrafficE, firstTrafficE, MOST_OFFERED);
+  // Where blocking is below a rounding unit the first attempts are the answer.
+  if (excess(firstTrafficE) >= 0) return firstTrafficE;
+  const endless = retryShare === 1 && firstTrafficE >= channels;
+  const bracket = endless ? undefined : bracketAround(excess, firstTrafficE, firstTrafficE, MOST_OFFERED);
   if (!bracket) {
     throw new NoAnswerError(
       `Repeated attempts never settle: ${firstTrafficE} erlang of first attempts on ${channels} channels with a retry share of ${retryShare}.`,
