@@ -1,5 +1,6 @@
 import { domain, positive, requireIn, shareBelowOne } from "../domain";
 import { DomainError, NoAnswerError } from "../errors";
+import { exponent } from "./path-loss/log-distance";
 
 export const sectorsOfArea = domain(1, 6, "1, 2, 3 or 6 sectors", { whole: true });
 /** A sphere's worth of cells: keeps squares and quotients finite. */
@@ -60,11 +61,11 @@ export function sites(areaKm2: number, radiusKm: number, sectors = 1): number {
  *
  * @param unloadedRadiusKm radius at no load, above 0
  * @param load uplink load factor, 0 to below 1
- * @param pathLossExponent above 0
+ * @param pathLossExponent 0.1 to 100
  */
 export function breathing(unloadedRadiusKm: number, load: number, pathLossExponent: number): number {
   requireIn(radius, "unloadedRadiusKm", unloadedRadiusKm);
   requireIn(shareBelowOne, "load", load);
-  requireIn(positive, "pathLossExponent", pathLossExponent);
+  requireIn(exponent, "pathLossExponent", pathLossExponent);
   return unloadedRadiusKm * Math.exp(Math.log1p(-load) / pathLossExponent);
 }

@@ -3,11 +3,10 @@ import { NoAnswerError } from "../errors";
 import { gaussian, scaledErfc } from "../numerics/erfc";
 import * as normal from "../numerics/normal";
 import { root } from "../numerics/root";
+import { exponent } from "./path-loss/log-distance";
 
 export const deviation = domain(0, 100, "a standard deviation from 0 to 100 dB");
 export const positiveDeviation = domain(0, 100, "a standard deviation above 0 and up to 100 dB", { openLow: true });
-
-export const slope = domain(0.1, 100, "a path-loss exponent from 0.1 to 100");
 
 /**
  * Shadowing margin in dB that keeps the signal at the cell edge above its threshold with the given probability.
@@ -53,7 +52,7 @@ function offsetOf(shadowingDb: number, pathLossExponent: number): number {
 export function area(edgeProbability: number, shadowingDb: number, pathLossExponent: number): number {
   requireIn(probability, "edgeProbability", edgeProbability);
   requireIn(deviation, "shadowingDb", shadowingDb);
-  requireIn(slope, "pathLossExponent", pathLossExponent);
+  requireIn(exponent, "pathLossExponent", pathLossExponent);
   const covered = 0.5 * weightedTail(normal.quantile(edgeProbability), offsetOf(shadowingDb, pathLossExponent));
   return Math.min(1, edgeProbability + covered);
 }
@@ -75,7 +74,7 @@ const LAST_BELOW_ONE = 1 - Number.EPSILON / 2;
 export function edge(areaProbability: number, shadowingDb: number, pathLossExponent: number): number {
   requireIn(probability, "areaProbability", areaProbability);
   requireIn(positiveDeviation, "shadowingDb", shadowingDb);
-  requireIn(slope, "pathLossExponent", pathLossExponent);
+  requireIn(exponent, "pathLossExponent", pathLossExponent);
   const offset = offsetOf(shadowingDb, pathLossExponent);
   // Compared by their logarithms, of the smaller of the shares covered and uncovered, so that neither tail loses digits.
   const covered = (z: number): number => Math.log((normal.cdf(z) + 0.5 * weightedTail(z, offset)) / areaProbability);
