@@ -6,6 +6,7 @@ import { join, resolve } from "node:path";
 import { fileURLToPath } from "node:url";
 import { build } from "esbuild";
 import { generate } from "./generate.mjs";
+import { writeLibrary } from "./library.mjs";
 import { writeManifest } from "./manifest.mjs";
 
 const root = resolve(fileURLToPath(import.meta.url), "../../..");
@@ -47,6 +48,7 @@ async function main() {
     });
   }
   writeManifest(root, version);
+  writeLibrary(root);
   const bytes = gzipSync(readFileSync(join(dist, "functions.js"))).length;
   console.log(`${count} functions; dist/functions.js ${(bytes / 1024).toFixed(0)} KB gzipped`);
 }
