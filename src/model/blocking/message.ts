@@ -1,9 +1,11 @@
 import { domain, nonNegative, positive, requireIn } from "../domain";
 import { NoAnswerError } from "../errors";
+import { productError } from "../numerics/exact";
 
 export const messageRate = domain(0, 1e12, "messages per hour from 0 to 1e12");
 
-const SECONDS_PER_HOUR = 3600;
+/** Bytes an hour that a channel of 1 kbit/s can send. */
+const BYTES_PER_HOUR_PER_KBPS = (1000 * 3600) / 8;
 
 /**
  * Mean delay of a message on one channel, waiting and its own transmission (M/G/1, Pollaczek-Khinchine).
@@ -22,14 +24,19 @@ export function delay(messagesPerHour: number, messageBytes: number, channelKbps
   requireIn(positive, "messageBytes", messageBytes);
   requireIn(positive, "channelKbps", channelKbps);
   requireIn(nonNegative, "sizeVariation", sizeVariation);
-  const transmissionS = (8 * messageBytes) / (1000 * channelKbps);
-  const capacityPerHour = SECONDS_PER_HOUR / transmissionS;
-  if (messagesPerHour >= capacityPerHour) {
+  const transmissionS = messageBytes / (125 * channelKbps);
+  const capacity = BYTES_PER_HOUR_PER_KBPS * channelKbps;
+  const load = messagesPerHour * messageBytes;
+  // Near full load the spare capacity is a small difference, so the rounding of both products counts.
+  const spare =
+    capacity -
+    load +
+    (productError(BYTES_PER_HOUR_PER_KBPS, channelKbps, capacity) - productError(messagesPerHour, messageBytes, load));
+  if (!(spare > 0)) {
     throw new NoAnswerError(
-      `The queue never settles: ${messagesPerHour} messages an hour is not below the ${capacityPerHour} that the channel can send.`,
+      `The queue never settles: ${messagesPerHour} messages an hour is not below the ${capacity / messageBytes} that the channel can send.`,
     );
   }
-  const waitS =
-    (messagesPerHour * transmissionS * (1 + sizeVariation * sizeVariation)) / (2 * (capacityPerHour - messagesPerHour));
+  const waitS = (load * transmissionS * (1 + sizeVariation * sizeVariation)) / (2 * spare);
   return transmissionS + waitS;
 }

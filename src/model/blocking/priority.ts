@@ -1,4 +1,5 @@
 import { positive, requireIn } from "../domain";
+import { sumError } from "../numerics/exact";
 import { delayed } from "./erlang-c";
 import { requireBelowServers, waitingTraffic } from "./waiting-domains";
 
@@ -16,13 +17,17 @@ import { requireBelowServers, waitingTraffic } from "./waiting-domains";
 export function wait(trafficE: readonly number[], channels: number, holdingTimeS: number): number[] {
   for (const traffic of trafficE) requireIn(waitingTraffic, "trafficE", traffic);
   requireIn(positive, "holdingTimeS", holdingTimeS);
-  const total = trafficE.reduce((sum, traffic) => sum + traffic, 0);
-  requireBelowServers(total, channels);
-  const base = delayed(total, channels) * holdingTimeS * channels;
+  // What rounding takes from the running sum is kept, since near full load it is a large part of N minus the sum.
+  const spare = [channels];
   let above = 0;
-  return trafficE.map((traffic) => {
-    const left = channels - above;
-    above += traffic;
-    return base / (left * (channels - above));
-  });
+  let rest = 0;
+  for (const traffic of trafficE) {
+    const sum = above + traffic;
+    rest += sumError(above, traffic, sum);
+    above = sum;
+    spare.push(channels - above - rest);
+  }
+  requireBelowServers(above, channels);
+  const base = delayed(above, channels) * holdingTimeS * channels;
+  return trafficE.map((_, i) => base / (spare[i]! * spare[i + 1]!));
 }

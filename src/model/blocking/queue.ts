@@ -25,10 +25,12 @@ function queueSums(
   channels: number,
   places: number,
 ): { accepted: number; last: number; unit: number } {
-  const logRho = Math.log1p((trafficE - channels) / channels);
+  // Near 1 the logarithm keeps its digits through the difference, elsewhere through the quotient.
+  const rho = trafficE / channels;
+  const logRho = rho > 0.5 && rho < 2 ? Math.log1p((trafficE - channels) / channels) : Math.log(rho);
   const exponent = places * logRho;
   if (trafficE <= channels) {
-    const accepted = geometric(trafficE / channels, logRho, exponent, places);
+    const accepted = geometric(rho, logRho, exponent, places);
     return { accepted, last: Math.exp(exponent), unit: 1 };
   }
   // Over load the sum is taken from its largest term downwards.

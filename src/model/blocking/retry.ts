@@ -1,7 +1,7 @@
 import { domain, requireIn, share } from "../domain";
 import { NoAnswerError } from "../errors";
 import { bracketAround, rootIn } from "../numerics/root";
-import { blockingOf, carriedOf } from "./erlang-b-formula";
+import { blockingOf, carriedOf, freeChannels } from "./erlang-b-formula";
 
 export const firstTraffic = domain(0, 1e6, "traffic from 0 to 1,000,000 erlang");
 export const retryChannels = domain(0, 1e7, "a number of channels from 0 to 10,000,000");
@@ -26,7 +26,12 @@ export function offered(firstTrafficE: number, channels: number, retryShare: num
   requireIn(share, "retryShare", retryShare);
   if (firstTrafficE === 0 || retryShare === 0) return firstTrafficE;
   if (channels === 0 && retryShare < 1) return firstTrafficE / (1 - retryShare);
-  const excess = (a: number): number => (1 - retryShare) * a + retryShare * carriedOf(a, channels) - firstTrafficE;
+  // Where the first attempts alone nearly fill the group, the free channels keep the digits that the carried traffic loses.
+  const spare = channels - firstTrafficE;
+  const excess =
+    Math.abs(spare) < 0.5 * channels
+      ? (a: number): number => (1 - retryShare) * a * blockingOf(a, channels) - freeChannels(a, channels) + spare
+      : (a: number): number => (1 - retryShare) * a + retryShare * carriedOf(a, channels) - firstTrafficE;
   // Where blocking is below a rounding unit the first attempts are the answer.
   if (excess(firstTrafficE) >= 0) return firstTrafficE;
   const endless = retryShare === 1 && firstTrafficE >= channels;

@@ -37,8 +37,8 @@ function scaledGamma(n: number): number {
 }
 
 function inverseTermFrom(n: number, deviance: TwoParts): number {
+  if (deviance.high > 709) return Infinity;
   const exponential = Math.exp(deviance.high);
-  // Beyond the doubles the correction would be infinity times something.
   return ROOT_TWO_PI * Math.sqrt(n) * scaledGamma(n) * (exponential + exponential * deviance.low);
 }
 
@@ -47,8 +47,7 @@ export function inverseTerm(n: number, mean: number): number {
   if (mean === 0) return n === 0 ? 1 : Infinity;
   // Below 1 the saddle point is no help, and the logarithms are small.
   if (n < 1) return Math.exp(mean - n * Math.log(mean) + logGammaOnePlus(n));
-  const deviance = poissonDeviance(n, mean);
-  return deviance.high > 709 ? Infinity : inverseTermFrom(n, deviance);
+  return inverseTermFrom(n, poissonDeviance(n, mean));
 }
 
 /**
@@ -101,8 +100,11 @@ export function legendreTail(n: number, mean: number): number {
   return sum;
 }
 
-/** below(n) for n below 1 and a small mean, where n may go to 0: n exp(mean) mean^-n Gamma(n, mean) by its series in the mean. */
-function belowNearZero(n: number, mean: number): number {
+/**
+ * below(n) for n from -1/2 to 1 and a small mean, with its digits as n goes to 0: n exp(mean) mean^-n Gamma(n, mean) by its series in
+ * the mean.
+ */
+export function belowNearZero(n: number, mean: number): number {
   let term = 1;
   let sum = 0;
   for (let k = 1; Math.abs(term) > NEGLIGIBLE; k++) {
@@ -132,8 +134,72 @@ export function below(n: number, mean: number): number {
   if (n < TEMME_FROM) return inverseTerm(n, mean) - aboveSeries(n, mean) - 1;
   const deviance = poissonDeviance(n, mean);
   if (mean >= n) return temme(n, mean, deviance.high);
-  if (deviance.high > 709) return Infinity;
   const whole = inverseTermFrom(n, deviance);
   if (deviance.high > DEVIANCE_OF_ROUNDING) return whole;
   return mean < SERIES_BELOW_RATIO * n ? whole - aboveSeries(n, mean) - 1 : whole - temme(n, mean, deviance.high);
+}
+
+/** Sums above n in units of the term at n: total is above(n); weighted counts each term j places above n as j terms. */
+export interface SumsAbove {
+  readonly total: number;
+  readonly weighted: number;
+}
+
+/**
+ * above(n) and its first moment, for n and mean of at least 0; Infinity where beyond the doubles.
+ *
+ * By balance weighted = mean - (n - mean) total, which loses digits only far below n. There a continued fraction of Kummer's
+ * M(1, n + 1, mean) = 1 + total (DLMF section 13.5) gives both: 1 + total = n / (n - mean + mean/g), weighted = mean (1 + total)/g.
+ *
+ * @param distance n - mean, where the caller knows it better than the difference of the two rounded numbers
+ */
+export function sumsAbove(n: number, mean: number, distance: number = n - mean): SumsAbove {
+  if (mean === 0) return { total: 0, weighted: 0 };
+  if (n < TEMME_FROM ? mean < n + TEMME_FROM : mean < SERIES_BELOW_RATIO * n) return sumsBySeries(n, mean);
+  const isNear = distance * distance < FAR * FAR * n;
+  if (distance > 0 && !isNear) {
+    const g = gaussFraction(distance, mean);
+    const total = (mean * (1 - 1 / g)) / (distance + mean / g);
+    return { total, weighted: (mean * (1 + total)) / g };
+  }
+  let total: number;
+  if (n < TEMME_FROM) {
+    total = inverseTerm(n, mean) - below(n, mean) - 1;
+  } else {
+    const { high, low } = poissonDeviance(n, mean);
+    // d deviance = (distance/mean) d distance: the part of the distance that n and mean do not show.
+    const deviance = { high, low: low + (distance / mean) * (distance - (n - mean)) };
+    const side = isNear ? temme(n, mean, Math.max(0, high + deviance.low)) : below(n, mean);
+    total = mean < n ? side - 1 : inverseTermFrom(n, deviance) - side - 1;
+  }
+  return { total, weighted: total === Infinity ? Infinity : mean - distance * total };
+}
+
+function sumsBySeries(n: number, mean: number): SumsAbove {
+  let term = mean / (n + 1);
+  let total = term;
+  let weighted = term;
+  for (let k = 2; k * term > NEGLIGIBLE * weighted; k++) {
+    term *= mean / (n + k);
+    total += term;
+    weighted += k * term;
+  }
+  return { total, weighted };
+}
+
+/** g = d + 1 + 2 mean/(d + 2 + 3 mean/(d + 3 + ...)) with d = n - mean, all parts positive. Steed's forward evaluation. */
+function gaussFraction(distance: number, mean: number): number {
+  let b = distance + 2;
+  let inverse = 1 / b;
+  let step = 2 * mean * inverse;
+  let sum = step;
+  for (let k = 3; k < MOST_TERMS && Math.abs(step) > NEGLIGIBLE * b; k++) {
+    const a = k * mean;
+    b += 1;
+    const before = inverse;
+    inverse = 1 / (b + a * before);
+    step *= -a * before * inverse;
+    sum += step;
+  }
+  return distance + 1 + sum;
 }
