@@ -4,7 +4,10 @@ import { decibelSum } from "../numerics/decibel-sum";
 import { requireEach } from "../radio/power";
 import { bandwidth, bitRate, processingGain } from "./domains";
 
+export { adjacent } from "./adjacent";
 export { downlink, uplink } from "./cdma-link";
+export { coverage } from "./coverage";
+export { outage } from "./outage";
 export { cluster, reuse } from "./reuse";
 
 /**
