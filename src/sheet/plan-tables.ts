@@ -1,0 +1,321 @@
+/** From the cells of a plan's tables to the model's rows and back. */
+import { changesBetween, ROUNDING, type ComparedPlan } from "../model/plan/changes";
+import { demandTable } from "../model/plan/demand";
+import type {
+  CellRow,
+  DemandRow,
+  InstalledRow,
+  PlanRow,
+  RadioColumn,
+  RoutingRow,
+  ServiceKind,
+  ServiceRow,
+} from "../model/plan/records";
+import { summarise, type Grouping } from "../model/plan/summary";
+import { planTable } from "../model/plan/table";
+import { isBlank } from "./argument";
+import { CellError, wrongInput } from "./cell-error";
+import * as schema from "./plan-schema";
+import { closest } from "./spelling";
+import { labelled, readTable, type Schema, type TableRows } from "./table";
+
+type Cells = readonly (readonly unknown[])[];
+
+/** Reads a table of which every row must be right, since rows of a plan hang together. */
+function readWhole(cells: Cells, name: string, columns: Schema): TableRows {
+  const table = readTable(cells, name, columns);
+  const [first] = table.problems;
+  if (first) {
+    const more = table.problems.length - 1;
+    throw wrongInput(more > 0 ? `${first.message} (${more} more wrong cells in ${name}.)` : first.message);
+  }
+  if (table.count === 0) throw wrongInput(`${name} has headings but no rows.`);
+  return table;
+}
+
+/** The rows of a table as objects, by its schema. */
+function rowsOf<Row>(table: TableRows, columns: Schema): Row[] {
+  const readers = Object.entries(columns).map(([name, column]) => {
+    const values = column.kind === "number" ? table.numbers(name) : table.texts(name);
+    return [name, values] as const;
+  });
+  return Array.from({ length: table.count }, (_, i) => {
+    const row: Record<string, unknown> = {};
+    for (const [name, values] of readers) row[name] = values[i];
+    return row as Row;
+  });
+}
+
+function readRows<Row>(cells: Cells, name: string, columns: Schema): Row[] {
+  return rowsOf<Row>(readWhole(cells, name, columns), columns);
+}
+
+function readDemand(cells: Cells): DemandRow[] {
+  const table = readWhole(cells, "Demand", schema.DEMAND);
+  const rows = rowsOf<DemandRow>(table, schema.DEMAND);
+  const seen = new Map<string, number>();
+  rows.forEach(({ area, year }, i) => {
+    const key = `${area} ${year}`;
+    const before = seen.get(key);
+    if (before !== undefined) {
+      throw wrongInput(
+        `Demand row ${table.rowNumbers[i]}, column area: ${area} has year ${year} already in row ${before}.`,
+      );
+    }
+    seen.set(key, table.rowNumbers[i]!);
+  });
+  return rows;
+}
+
+/** What a service of each kind cannot do without. */
+const NEEDS: Readonly<Record<ServiceKind, readonly string[]>> = {
+  call: ["callsPerHour", "holdingTimeS"],
+  "group call": ["callsPerHour", "holdingTimeS"],
+  data: ["busyHourShare"],
+  message: ["messagesPerHour", "messageBytes"],
+};
+
+function readServices(cells: Cells): ServiceRow[] {
+  const table = readWhole(cells, "Services", schema.SERVICES);
+  const rows = rowsOf<ServiceRow>(table, schema.SERVICES);
+  rows.forEach((row, i) => {
+    for (const column of NEEDS[row.kind]) {
+      if (!table.present.has(column))
+        throw wrongInput(`Services lacks the column ${column}, which a ${row.kind} needs.`);
+    }
+    if (!Number.isNaN(row.targetWaitS) && Number.isNaN(row.targetWaitShare)) {
+      throw wrongInput(`Services row ${table.rowNumbers[i]}, column targetWaitShare: missing beside targetWaitS.`);
+    }
+    if (row.kind === "message" && Number.isNaN(row.targetWaitS)) {
+      throw wrongInput(`Services row ${table.rowNumbers[i]}, column targetWaitS: missing; a message waits.`);
+    }
+  });
+  return rows;
+}
+
+/** The radio table lies on its side: a row a parameter, a column a scheme. */
+function readRadio(cells: Cells): Map<string, RadioColumn> {
+  const [heading, ...rows] = cells;
+  if (!heading || String(heading[0]).trim().toLowerCase() !== "parameter") {
+    throw wrongInput('Radio must begin with a heading row: "parameter", then a column for each scheme.');
+  }
+  const known = [...schema.RADIO_NUMBERS, ...schema.RADIO_TEXTS];
+  const byLower = new Map(known.map((name) => [name.toLowerCase(), name]));
+  const schemes = heading.map((name) => (isBlank(name) || name === 0 ? "" : String(name).trim()));
+  const radio = new Map<string, Map<string, number | string>>();
+  for (const name of schemes.slice(1)) {
+    if (name === "") continue;
+    if (radio.has(name)) throw wrongInput(`Radio has the scheme ${name} twice.`);
+    radio.set(name, new Map());
+  }
+  if (radio.size === 0) throw wrongInput("Radio names no scheme in its first row.");
+  rows.forEach((row, r) => {
+    if (isBlank(row[0]) || row[0] === 0) return;
+    const heading = String(row[0]).trim();
+    const parameter = byLower.get(heading.toLowerCase());
+    if (parameter === undefined) {
+      const meant = closest(heading, known);
+      if (meant) throw wrongInput(`Radio row ${r + 2}, column parameter: "${heading}" looks like ${meant}, misspelt.`);
+      return;
+    }
+    schemes.forEach((scheme, c) => {
+      const cell = row[c];
+      if (c === 0 || scheme === "" || isBlank(cell)) return;
+      const where = `Radio row ${r + 2}, column ${scheme}: ${parameter}`;
+      if (cell instanceof CellError) throw cell;
+      if (schema.RADIO_TEXTS.includes(parameter)) {
+        // An empty cell that arrives as 0 is no text.
+        if (cell !== 0) radio.get(scheme)!.set(parameter, String(cell).trim());
+      } else if (typeof cell !== "number" || !Number.isFinite(cell)) {
+        throw wrongInput(
+          `${where} is ${typeof cell === "string" ? `the text "${cell.slice(0, 40)}"` : String(cell)}; allowed: a number.`,
+        );
+      } else if (cell !== 0 || !MEANINGLESS_AT_ZERO.has(parameter)) radio.get(scheme)!.set(parameter, cell);
+    });
+  });
+  return radio;
+}
+
+/** Parameters of which a 0 can only be an empty cell; for the others an empty cell and 0 should be told apart by the planner. */
+const MEANINGLESS_AT_ZERO: ReadonlySet<string> = new Set([
+  "bandwidthMHz",
+  "channelSpacingKHz",
+  "slotsPerCarrier",
+  "blocks",
+  "blockBandwidthKHz",
+  "chipRateMcps",
+  "bitRateKbps",
+  "clusterSize",
+  "sectors",
+  "spectralEfficiency",
+  "uplinkSpectralEfficiency",
+  "pathLossExponent",
+  "attenuation",
+  "maximumBpsHz",
+  "loadLimit",
+  "frequencyMHz",
+  "baseHeightM",
+  "mobileHeightM",
+  "referenceLossDb",
+  "eirpDbm",
+  "uplinkEirpDbm",
+  "areaProbability",
+  "downlinkTimeShare",
+  "edgeSnrDb",
+  "guardTimeUs",
+  "maximumCarriers",
+]);
+
+/** PLAN.DEMAND on cells. */
+export function demandCells(demand: Cells, services: Cells): unknown[][] {
+  const rows = demandTable(readDemand(demand), readServices(services));
+  return labelled(
+    ["area", "year", "service", "trafficE", "downMbps", "upMbps"],
+    rows.map((row) => [row.area, row.year, row.service, row.trafficE, row.downMbps, row.upMbps]),
+  );
+}
+
+/** Columns of the plan, in the order in which they are written. */
+const PLAN_COLUMNS: readonly (keyof PlanRow)[] = [
+  "cell",
+  "site",
+  "area",
+  "year",
+  "scheme",
+  "callTrafficE",
+  "waitingTrafficE",
+  "downMbps",
+  "upMbps",
+  "channelsRequired",
+  "carriersRequired",
+  "carriersInstalled",
+  "blocking",
+  "worstService",
+  "waitS",
+  "throughputMbps",
+  "uplinkLoad",
+  "downlinkLoad",
+  "interferenceMarginDb",
+  "radiusKm",
+  "radiusNeededKm",
+  "coverageMet",
+  "capacityMet",
+  "limitedBy",
+  "spareShare",
+  "users",
+];
+
+/** PLAN.TABLE on cells. */
+export function planCells(
+  cells: Cells,
+  demand: Cells,
+  services: Cells,
+  routing: Cells,
+  radio: Cells,
+  installed: Cells,
+  year?: number,
+  percentile?: number,
+): unknown[][] {
+  const rows = planTable(
+    {
+      cells: readRows<CellRow>(cells, "Cells", schema.CELLS),
+      demand: readDemand(demand),
+      services: readServices(services),
+      routing: readRows<RoutingRow>(routing, "Routing", schema.ROUTING),
+      radio: readRadio(radio),
+      installed: readRows<InstalledRow>(installed, "Installed", schema.INSTALLED),
+    },
+    year,
+    percentile,
+  );
+  return labelled(
+    PLAN_COLUMNS,
+    rows.map((row) => PLAN_COLUMNS.map((column) => row[column] ?? "")),
+  );
+}
+
+function flagAt(cells: Cells, plan: TableRows, column: string): (row: number) => boolean {
+  const at = cells[0]!.findIndex((name) => String(name).trim().toLowerCase() === column.toLowerCase());
+  return (row) => {
+    const cell = at < 0 ? true : cells[plan.rowNumbers[row]! - 1]![at];
+    return cell === true || (typeof cell === "string" && cell.trim().toLowerCase() === "true") || cell === 1;
+  };
+}
+
+/** PLAN.SUMMARY on cells. */
+export function summaryCells(planCells: Cells, by: Grouping): unknown[][] {
+  const plan = readWhole(planCells, "Plan", schema.PLAN);
+  const capacityMet = flagAt(planCells, plan, "capacityMet");
+  const coverageMet = flagAt(planCells, plan, "coverageMet");
+  const key = by === "year" ? plan.numbers("year") : plan.texts(by);
+  const rows = rowsOf<Omit<Parameters<typeof summarise>[0] extends Iterable<infer R> ? R : never, never>>(
+    plan,
+    schema.PLAN,
+  );
+  const summary = summarise(
+    rows.map((row, i) => ({ ...row, key: key[i]!, capacityMet: capacityMet(i), coverageMet: coverageMet(i) })),
+  );
+  return labelled(
+    [
+      by,
+      "users",
+      "callTrafficE",
+      "waitingTrafficE",
+      "downMbps",
+      "upMbps",
+      "cells",
+      "cellsShort",
+      "cellsUncovered",
+      "carriersRequired",
+      "carriersInstalled",
+      "blocking",
+    ],
+    summary.map((row) => [
+      row.key,
+      row.users,
+      row.callTrafficE,
+      row.waitingTrafficE,
+      row.downMbps,
+      row.upMbps,
+      row.cells,
+      row.cellsShort,
+      row.cellsUncovered,
+      row.carriersRequired,
+      row.carriersInstalled,
+      Number.isNaN(row.blocking) ? "" : row.blocking,
+    ]),
+  );
+}
+
+const KEY_COLUMNS = { cell: schema.PLAN.cell, year: schema.PLAN.year, scheme: schema.PLAN.scheme } satisfies Schema;
+
+function comparedPlan(cells: Cells, name: string): ComparedPlan {
+  const table = readWhole(cells, name, KEY_COLUMNS);
+  const year = table.numbers("year");
+  const scheme = table.texts("scheme");
+  const keys = table.texts("cell").map((cell, i): [string, number, string] => [cell, year[i]!, scheme[i]!]);
+  const columns = new Map<string, unknown[]>();
+  cells[0]!.forEach((heading, c) => {
+    if (isBlank(heading) || String(heading).trim().toLowerCase() in KEY_COLUMNS) return;
+    columns.set(
+      String(heading).trim(),
+      table.rowNumbers.map((row) => plain(cells[row - 1]![c])),
+    );
+  });
+  return { keys, columns };
+}
+
+/** Blank cells arrive as null, as a text or as nothing, all the same here. */
+function plain(cell: unknown): unknown {
+  if (isBlank(cell)) return "";
+  return cell instanceof CellError ? cell.code : cell;
+}
+
+/** PLAN.CHANGES on cells. */
+export function changeCells(before: Cells, after: Cells, tolerance = ROUNDING): unknown[][] {
+  const changes = changesBetween(comparedPlan(before, "before"), comparedPlan(after, "after"), tolerance);
+  return labelled(
+    ["cell", "year", "scheme", "column", "before", "after", "change"],
+    changes.map((row) => [row.cell, row.year, row.scheme, row.column, row.before, row.after, row.change]),
+  );
+}
