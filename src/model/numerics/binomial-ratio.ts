@@ -72,8 +72,7 @@ function belowOne(n: number, mean: number): TwoParts {
  * A. R. DiDonato, A. H. Morris, "Significant digit computation of the incomplete beta function ratios", ACM TOMS 18 (1992),
  * equation 9. All parts are positive up to order b, since it is used for `lambda` >= 0 only. Lentz's forward evaluation: its factors
  * lose nothing over the thousands of orders that the transition of many trials takes, where Steed's sum loses four digits.
- *
- * @param lambda a - (a + b) x, from the caller since it cancels
+ * The caller gives lambda = a - (a + b) x, since it cancels, and y = 1 - x.
  */
 function betaFraction(a: number, b: number, x: number, y: number, lambda: number): number {
   let fraction = (a * (lambda + 1)) / (a + 1);

@@ -21,7 +21,7 @@ describe("50-digit values", () => {
   const cases = Object.keys(regimes).flatMap((regime) => quantities.map((quantity) => [regime, ...quantity] as const));
 
   test.each(cases)("%s: %s", (regime, _name, quantity, column) => {
-    const rows = regimes[regime as keyof typeof regimes] as number[][];
+    const rows: number[][] = regimes[regime as keyof typeof regimes];
     expect(rows.length).toBeGreaterThan(15);
     for (const row of rows) {
       const inputs = [row[0]!, row[1]!, row[2]!] as const;
