@@ -1,0 +1,322 @@
+/**
+ * Calculates a workbook with our functions, guarding against what the engine does silently: old values that survive, old
+ * spills in the way, names it does not know, spill references, passes that are not enough, circles, and too many formulas.
+ */
+import { CellError } from "../../sheet/cell-error";
+import { addressOf, parseRange } from "../address";
+import { WorkbookFailure } from "../failure";
+import type { FunctionTable } from "../function-table";
+import { storedCalls } from "../stored-names";
+import { runCalculation, type Book, type Cell, type Sheet } from "./library";
+import { remembering } from "./memo";
+import { engineFunctions } from "./own-functions";
+import { findCircle, type Area, type FormulaNode } from "./references";
+
+export type Value = number | string | boolean | CellError | null;
+
+/** What one cell holds after the calculation; `ref` for the anchor of a spill. */
+export interface Calculated {
+  readonly value: Value;
+  readonly ref?: string;
+}
+
+export interface Outcome {
+  /** New values by sheet name and "row,column": formulas, spilled cells, and old spilled cells that are empty now. */
+  readonly cells: ReadonlyMap<string, ReadonlyMap<string, Calculated>>;
+  /** Errors that our functions gave, with their messages, most frequent first. */
+  readonly messages: readonly {
+    readonly id: string;
+    readonly code: string;
+    readonly message: string;
+    readonly count: number;
+  }[];
+  readonly formulas: number;
+}
+
+/** The engine's cache of parsed formulas; beyond it formulas stay uncalculated without a word. */
+const MOST_DISTINCT_FORMULAS = 10_000;
+const MOST_PASSES = 8;
+const FORMULA_CELL = 6;
+
+interface Formula {
+  readonly sheet: Sheet;
+  readonly cell: Cell;
+  readonly row: number;
+  readonly column: number;
+  readonly text: string;
+  readonly dynamic: boolean;
+  /** Rows and columns that its answer fills. */
+  rows: number;
+  columns: number;
+}
+
+interface CellModel {
+  readonly ref?: string;
+  readonly shareType?: string;
+  readonly isDynamicArray?: boolean;
+}
+
+function collect(book: Book): Formula[] {
+  const found: Formula[] = [];
+  for (const sheet of book.worksheets) {
+    sheet.eachRow((row) =>
+      row.eachCell((cell) => {
+        if ((cell.type as number) !== FORMULA_CELL || !cell.formula) return;
+        const model = cell.model as CellModel;
+        const range = model.isDynamicArray && model.ref ? parseRange(model.ref) : undefined;
+        found.push({
+          sheet,
+          cell,
+          row: Number(cell.row),
+          column: Number(cell.col),
+          text: cell.formula,
+          dynamic: model.isDynamicArray === true,
+          rows: range ? range.to.row - range.from.row + 1 : 1,
+          columns: range ? range.to.column - range.from.column + 1 : 1,
+        });
+      }),
+    );
+  }
+  return found;
+}
+
+function keyOf(row: number, column: number): string {
+  return `${row},${column}`;
+}
+
+/** Names that stand for one area. */
+function namedAreas(book: Book): Map<string, Area> {
+  const names = new Map<string, Area>();
+  const entries = (book.definedNames as unknown as { model: { name: string; ranges: string[] }[] }).model ?? [];
+  for (const { name, ranges } of entries) {
+    const [only] = ranges;
+    if (ranges.length !== 1 || only === undefined) continue;
+    const match = /^(?:'((?:[^']|'')+)'|([^!]+))!(.+)$/.exec(only);
+    const range = match && parseRange(match[3]!);
+    if (!range) continue;
+    const sheet = match[1]?.replace(/''/g, "'") ?? match[2]!;
+    names.set(name.toLowerCase(), {
+      sheet,
+      top: range.from.row,
+      left: range.from.column,
+      bottom: range.to.row,
+      right: range.to.column,
+    });
+  }
+  return names;
+}
+
+function refuse(formulas: readonly Formula[], book: Book, functions: ReadonlyMap<string, unknown>): void {
+  const distinct = new Set(formulas.map(({ text }) => text));
+  if (distinct.size > MOST_DISTINCT_FORMULAS) {
+    throw new WorkbookFailure(
+      `the workbook has ${distinct.size} different formulas and at most ${MOST_DISTINCT_FORMULAS} can be calculated here; use spilled formulas, one for a whole column.`,
+    );
+  }
+  for (const { sheet, row, column, text } of formulas) {
+    const unknown = storedCalls(text).find((name) => !functions.has(name.toUpperCase()));
+    if (unknown) {
+      throw new WorkbookFailure(
+        `sheet ${sheet.name}, cell ${addressOf(row, column)}: the function ${unknown.replace(/^_xldudf_/, "").replace(/_/g, ".")} belongs to another add-in.`,
+      );
+    }
+  }
+  const nodes = formulas.map(({ sheet, row, column, rows, columns, text }): FormulaNode => ({
+    sheet: sheet.name,
+    top: row,
+    left: column,
+    bottom: row + rows - 1,
+    right: column + columns - 1,
+    formula: text,
+  }));
+  const circle = findCircle(nodes, namedAreas(book));
+  if (circle.length > 0) {
+    const places = circle.slice(0, 5).map(({ sheet, top, left }) => `${sheet}!${addressOf(top, left)}`);
+    throw new WorkbookFailure(`these formulas depend on themselves: ${places.join(", ")}.`);
+  }
+}
+
+/** Replaces `_xlfn.ANCHORARRAY(Plan!$A$6)` by the range that the anchor fills now; the engine knows no spill references. */
+function withoutSpillReferences(formula: Formula, at: ReadonlyMap<string, Formula>): string {
+  return formula.text.replace(/_xlfn\.ANCHORARRAY\(([^()]+)\)/g, (whole, reference: string) => {
+    const match = /^(?:(?:'((?:[^']|'')+)'|([^!]+))!)?\$?([A-Z]+)\$?(\d+)$/.exec(reference.trim());
+    if (!match) return whole;
+    const sheet = match[1]?.replace(/''/g, "'") ?? match[2] ?? formula.sheet.name;
+    const range = parseRange(`${match[3]}${match[4]}`)!;
+    const anchor = at.get(`${sheet.toLowerCase()}!${keyOf(range.from.row, range.from.column)}`);
+    const rows = anchor?.rows ?? 1;
+    const columns = anchor?.columns ?? 1;
+    const last = addressOf(range.from.row + rows - 1, range.from.column + columns - 1);
+    return `'${sheet.replace(/'/g, "''")}'!${match[3]}${match[4]}:${last}`;
+  });
+}
+
+/** Empties formula results and the cells that the last spill left, so that nothing old can pass for new. */
+function clear(formulas: readonly Formula[]): void {
+  const anchors = new Set(formulas.map(({ sheet, row, column }) => `${sheet.name}!${keyOf(row, column)}`));
+  for (const formula of formulas) {
+    const { sheet, cell, row, column, rows, columns } = formula;
+    cell.result = undefined as never;
+    if (!formula.dynamic) continue;
+    for (let r = row; r < row + rows; r++) {
+      for (let c = column; c < column + columns; c++) {
+        if (anchors.has(`${sheet.name}!${keyOf(r, c)}`)) continue;
+        const ghost = sheet.findCell(r, c);
+        if (ghost && ghost.value !== null) ghost.value = null;
+      }
+    }
+  }
+}
+
+type Extents = Map<string, { rows: number; columns: number }>;
+
+/** One pass; the cells that the engine asks to write tell how far each spill reaches. */
+function onePass(book: Book, userFunctions: ReadonlyMap<string, unknown>): Extents {
+  const extents: Extents = new Map();
+  let at = { sheet: "", row: 0, column: 0 };
+  const view = book.worksheets.map((sheet) => ({
+    id: sheet.id,
+    name: sheet.name,
+    get dimensions() {
+      return sheet.dimensions;
+    },
+    eachRow: (...args: Parameters<Sheet["eachRow"]>) => sheet.eachRow(...args),
+    getTables: () => sheet.getTables?.() ?? [],
+    mergedRegions: (sheet as unknown as { mergedRegions: unknown }).mergedRegions,
+    findCell(row: number, column: number) {
+      at = { sheet: sheet.name, row, column };
+      return sheet.findCell(row, column);
+    },
+    getCell(row: number, column: number) {
+      const key = `${at.sheet.toLowerCase()}!${keyOf(at.row, at.column)}`;
+      const extent = extents.get(key) ?? { rows: 1, columns: 1 };
+      extent.rows = Math.max(extent.rows, row - at.row + 1);
+      extent.columns = Math.max(extent.columns, column - at.column + 1);
+      extents.set(key, extent);
+      return sheet.getCell(row, column);
+    },
+  }));
+  const workbook = book as unknown as Record<string, unknown>;
+  runCalculation({
+    worksheets: view,
+    getWorksheet: (id: number | string) => view.find((sheet) => sheet.id === id || sheet.name === id),
+    definedNames: workbook["definedNames"],
+    calcProperties: workbook["calcProperties"],
+    properties: workbook["properties"],
+    userFunctions,
+  });
+  return extents;
+}
+
+function valueOf(raw: unknown): Value {
+  if (raw === null || raw === undefined) return null;
+  if (typeof raw === "number") return Number.isFinite(raw) ? raw : new CellError("#NUM!", "not a number");
+  if (typeof raw === "string" || typeof raw === "boolean") return raw;
+  if (raw instanceof Date) return raw.getTime() / 86_400_000 + 25_569;
+  const code = (raw as { error?: string }).error;
+  return code === undefined ? null : new CellError(code as CellError["code"], "");
+}
+
+function valuesOf(formulas: readonly Formula[]): Map<string, Map<string, Calculated>> {
+  const sheets = new Map<string, Map<string, Calculated>>();
+  for (const { sheet, cell, row, column, rows, columns, dynamic } of formulas) {
+    let cells = sheets.get(sheet.name);
+    if (!cells) {
+      cells = new Map();
+      sheets.set(sheet.name, cells);
+    }
+    const value = valueOf(cell.result);
+    const ref =
+      rows * columns > 1
+        ? `${addressOf(row, column)}:${addressOf(row + rows - 1, column + columns - 1)}`
+        : addressOf(row, column);
+    cells.set(keyOf(row, column), dynamic ? { value, ref } : { value });
+    if (!dynamic) continue;
+    for (let r = row; r < row + rows; r++) {
+      for (let c = column; c < column + columns; c++) {
+        if (r === row && c === column) continue;
+        cells.set(keyOf(r, c), { value: valueOf(sheet.findCell(r, c)?.value) });
+      }
+    }
+  }
+  return sheets;
+}
+
+function sameValue(a: Value, b: Value): boolean {
+  if (a instanceof CellError || b instanceof CellError) {
+    return a instanceof CellError && b instanceof CellError && a.code === b.code;
+  }
+  return a === b;
+}
+
+function settled(before: ReturnType<typeof valuesOf>, after: ReturnType<typeof valuesOf>): boolean {
+  for (const [sheet, cells] of after) {
+    const old = before.get(sheet);
+    if (!old || old.size !== cells.size) return false;
+    for (const [key, { value }] of cells) {
+      const was = old.get(key);
+      if (!was || !sameValue(was.value, value)) return false;
+    }
+  }
+  return true;
+}
+
+/**
+ * Calculates every formula of the workbook until nothing changes any more.
+ *
+ * @param book workbook in the engine; its formulas may be rewritten there, so it is not for saving
+ * @param functions our functions
+ * @throws WorkbookFailure for a circle, a function of another add-in, too many formulas, or values that never settle
+ */
+export function calculate(book: Book, functions: FunctionTable): Outcome {
+  const messages = new Map<string, { id: string; code: string; message: string; count: number }>();
+  const userFunctions = engineFunctions(remembering(functions), (id, { code, message }) => {
+    const key = `${id} ${code} ${message}`;
+    const known = messages.get(key);
+    if (known) known.count++;
+    else messages.set(key, { id, code, message, count: 1 });
+  });
+  const formulas = collect(book);
+  refuse(formulas, book, userFunctions);
+  const at = new Map(
+    formulas.map((formula) => [`${formula.sheet.name.toLowerCase()}!${keyOf(formula.row, formula.column)}`, formula]),
+  );
+  const oldGhosts = valuesOf(formulas);
+  let before: ReturnType<typeof valuesOf> = new Map();
+  for (let pass = 1; ; pass++) {
+    if (pass > MOST_PASSES)
+      throw new WorkbookFailure("the workbook's values never settle; its formulas change each other.");
+    messages.clear();
+    clear(formulas);
+    for (const formula of formulas) {
+      const text = withoutSpillReferences(formula, at);
+      if (text !== formula.cell.formula)
+        formula.cell.value = { ...(formula.cell.value as object), formula: text, result: undefined } as never;
+    }
+    const extents = onePass(book, userFunctions);
+    for (const [key, formula] of at) {
+      const extent = formula.dynamic ? extents.get(key) : undefined;
+      formula.rows = extent?.rows ?? 1;
+      formula.columns = extent?.columns ?? 1;
+    }
+    const unresolved = formulas.find(({ cell }) => cell.result === undefined);
+    if (unresolved) {
+      throw new WorkbookFailure(
+        `sheet ${unresolved.sheet.name}, cell ${addressOf(unresolved.row, unresolved.column)}: the formula cannot be calculated here.`,
+      );
+    }
+    const after = valuesOf(formulas);
+    if (settled(before, after)) break;
+    before = after;
+  }
+  // Cells that an old spill filled and the new one does not are empty now.
+  for (const [sheet, cells] of oldGhosts) {
+    const now = before.get(sheet)!;
+    for (const key of cells.keys()) if (!now.has(key)) now.set(key, { value: null });
+  }
+  return {
+    cells: before,
+    messages: [...messages.values()].sort((a, b) => b.count - a.count),
+    formulas: formulas.length,
+  };
+}
