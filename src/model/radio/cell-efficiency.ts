@@ -66,6 +66,17 @@ function withoutShadowing({ perNeper, maximum, lower, upper }: LinkCurve): Local
 }
 
 /**
+ * Nodes for a stretch of the normal average: enough for the density, and for the singularities of log2(1 + SINR) that a
+ * wide stretch comes close to.
+ *
+ * @param width length in deviations
+ * @param nepers the same in nepers of SINR
+ */
+function normalNodes(width: number, nepers: number): number {
+  return 8 * Math.ceil(Math.max(width < 5 ? 10 : 2 * width, 1.3 * nepers) / 8);
+}
+
+/**
  * The normal average is split at the jump of the curve at its minimum and its kink at the maximum. The interval reaches
  * down to the peak of density / rate, which lies at minus the deviation in nepers.
  */
@@ -81,7 +92,7 @@ function withShadowing({ perNeper, maximum, lower, upper }: LinkCurve, deviation
     const low = Math.max(served, floor);
     const high = Math.min(capped, NORMAL_REACH);
     if (!(high > low)) return;
-    const { nodes, weights } = legendre(detail * (high - low < 5 ? 10 : high - low < 10 ? 16 : 24));
+    const { nodes, weights } = legendre(detail * normalNodes(high - low, (high - low) * deviation));
     const half = 0.5 * (high - low);
     const middle = 0.5 * (high + low);
     for (let k = 0; k < nodes.length; k++) {

@@ -84,7 +84,7 @@ export function requiredSinr(
   // A rate computed as bandwidth times maximum may lie a rounding above it.
   if (bpsHz > maximumBpsHz * (1 + 4 * Number.EPSILON)) {
     throw new NoAnswerError(
-      `${bitRateKbps} kbit/s in ${bandwidthMHz} MHz needs ${Number(bpsHz.toPrecision(4))} bit/s/Hz, more than the maximum of ${maximumBpsHz}.`,
+      `${bitRateKbps} kbit/s in ${bandwidthMHz} MHz needs ${Number(bpsHz.toPrecision(6))} bit/s/Hz, more than the maximum of ${maximumBpsHz}.`,
     );
   }
   return Math.max(minimumDb, sinrOfBits(bpsHz / attenuation));
