@@ -45,7 +45,7 @@ export function ltePeak(
     bandwidthMHz: number(bandwidthMHz, lteBandwidth),
     layers: optionalNumber(layers, lte.layerCount, 2),
     modulationBits: optionalNumber(modulationBits, bitsASymbol, 6),
-    codeRate: optionalNumber(codeRate, lte.codeRate, lte.DEFAULT_CODE_RATE),
+    codeRate: optionalNumber(codeRate, lte.codeRates, lte.DEFAULT_CODE_RATE),
     overheadShare: optionalNumber(overheadShare, share, 0.25),
   });
 }

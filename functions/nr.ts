@@ -2,7 +2,7 @@ import { share } from "../src/model/domain";
 import { NR_TABLE_NAMES, nrIndex } from "../src/model/standards/channel-quality";
 import { modulationBits as bitsASymbol } from "../src/model/standards/modulation-bits";
 import * as nr from "../src/model/standards/nr";
-import { frequencyRange as ranges, nrBandwidth, nrSpacing } from "../src/model/standards/resource-blocks";
+import { frequencyRanges, nrBandwidth, nrSpacing } from "../src/model/standards/resource-blocks";
 import * as block from "../src/model/standards/transport-block";
 import { number, optionalChoice, optionalNumber, perCell } from "../src/sheet/call";
 
@@ -22,7 +22,7 @@ export function nrBlocks(bandwidthMHz: any[][], subcarrierKHz: any[][], frequenc
   return perCell(nr.blocks, {
     bandwidthMHz: number(bandwidthMHz, nrBandwidth),
     subcarrierKHz: number(subcarrierKHz, nrSpacing),
-    frequencyRange: optionalNumber(frequencyRange, ranges, 1),
+    frequencyRange: optionalNumber(frequencyRange, frequencyRanges, 1),
   });
 }
 
@@ -61,7 +61,7 @@ export function nrPeak(
     modulationBits: optionalNumber(modulationBits, bitsASymbol, 8),
     scaling: optionalNumber(scaling, nr.scalingFactor, 1),
     overheadShare: optionalNumber(overheadShare, share, 0.14),
-    frequencyRange: optionalNumber(frequencyRange, ranges, 1),
+    frequencyRange: optionalNumber(frequencyRange, frequencyRanges, 1),
     timeShare: optionalNumber(timeShare, share, 1),
   });
 }
@@ -96,7 +96,7 @@ export function nrTransportblock(
     blocks: number(blocks, block.blockCount),
     symbols: number(symbols, block.symbolCount),
     modulationBits: number(modulationBits, bitsASymbol),
-    codeRate1024: number(codeRate1024, block.codeRate1024),
+    codeRate1024: number(codeRate1024, block.codeRates1024),
     layers: number(layers, block.codewordLayers),
     dmrsPerBlock: optionalNumber(dmrsPerBlock, block.elementCount, 12),
     overheadPerBlock: optionalNumber(overheadPerBlock, block.elementCount, 0),

@@ -56,7 +56,7 @@ export const NR_BLOCKS_RANGE_2: Readonly<Record<number, Blocks>> = {
 export const lteBandwidth = domain(1.4, 20, "a channel bandwidth of 1.4, 3, 5, 10, 15 or 20 MHz");
 export const nrBandwidth = domain(3, 2000, "a channel bandwidth of the standard, 3 to 2000 MHz");
 export const nrSpacing = domain(15, 960, "a subcarrier spacing of 15, 30, 60, 120, 480 or 960 kHz", { whole: true });
-export const frequencyRange = domain(1, 2, "frequency range 1 or 2", { whole: true });
+export const frequencyRanges = domain(1, 2, "frequency range 1 or 2", { whole: true });
 
 function listed(table: Readonly<Record<number, unknown>>, unit: string): string {
   const values = Object.keys(table)
@@ -82,18 +82,22 @@ export function lteBlocks(bandwidthMHz: number): number {
  *
  * @param bandwidthMHz channel bandwidth that the standard defines for the spacing
  * @param subcarrierKHz 15, 30 or 60 in frequency range 1; 60, 120, 480 or 960 in range 2
- * @param range 1 (up to 7.125 GHz) or 2 (from 24.25 GHz)
+ * @param frequencyRange 1 (up to 7.125 GHz) or 2 (from 24.25 GHz)
  */
-export function nrBlocks(bandwidthMHz: number, subcarrierKHz: number, range = 1): number {
-  requireIn(frequencyRange, "frequencyRange", range);
-  const table = range === 1 ? NR_BLOCKS_RANGE_1 : NR_BLOCKS_RANGE_2;
+export function nrBlocks(bandwidthMHz: number, subcarrierKHz: number, frequencyRange = 1): number {
+  requireIn(frequencyRanges, "frequencyRange", frequencyRange);
+  const table = frequencyRange === 1 ? NR_BLOCKS_RANGE_1 : NR_BLOCKS_RANGE_2;
   const row = table[subcarrierKHz];
   if (row === undefined) {
-    throw new DomainError("subcarrierKHz", subcarrierKHz, `in frequency range ${range} ${listed(table, "kHz")}`);
+    throw new DomainError(
+      "subcarrierKHz",
+      subcarrierKHz,
+      `in frequency range ${frequencyRange} ${listed(table, "kHz")}`,
+    );
   }
   const blocks = row[bandwidthMHz];
   if (blocks === undefined) {
-    const allowed = `at ${subcarrierKHz} kHz in frequency range ${range} ${listed(row, "MHz")}`;
+    const allowed = `at ${subcarrierKHz} kHz in frequency range ${frequencyRange} ${listed(row, "MHz")}`;
     throw new DomainError("bandwidthMHz", bandwidthMHz, allowed);
   }
   return blocks;

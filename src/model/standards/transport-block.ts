@@ -4,7 +4,7 @@ import { requireModulationBits } from "./modulation-bits";
 
 export const blockCount = domain(1, 275, "a whole number of resource blocks from 1 to 275", { whole: true });
 export const symbolCount = domain(1, 14, "a whole number of symbols from 1 to 14", { whole: true });
-export const codeRate1024 = domain(0, 1024, "1024 times the code rate, above 0 and below 1024", {
+export const codeRates1024 = domain(0, 1024, "1024 times the code rate, above 0 and below 1024", {
   openLow: true,
   openHigh: true,
 });
@@ -48,7 +48,7 @@ const LARGEST_SMALL = 3824;
  * @param blocks resource blocks, 1 to 275
  * @param symbols symbols of the allocation in its slot, 1 to 14
  * @param modulationBits 1, 2, 4, 6, 8 or 10
- * @param codeRate 1024 times the code rate
+ * @param codeRate1024 1024 times the code rate
  * @param layers 1 to 4
  * @param dmrsPerBlock resource elements of reference signals in a block
  * @param overheadPerBlock other resource elements not to be used: 0, 6, 12 or 18 as configured
@@ -57,7 +57,7 @@ export function transportBlock(
   blocks: number,
   symbols: number,
   modulationBits: number,
-  codeRate: number,
+  codeRate1024: number,
   layers: number,
   dmrsPerBlock = 12,
   overheadPerBlock = 0,
@@ -65,7 +65,7 @@ export function transportBlock(
   requireIn(blockCount, "blocks", blocks);
   requireIn(symbolCount, "symbols", symbols);
   requireModulationBits(modulationBits);
-  requireIn(codeRate1024, "codeRate1024", codeRate);
+  requireIn(codeRates1024, "codeRate1024", codeRate1024);
   requireIn(codewordLayers, "layers", layers);
   requireIn(elementCount, "dmrsPerBlock", dmrsPerBlock);
   requireIn(elementCount, "overheadPerBlock", overheadPerBlock);
@@ -77,8 +77,8 @@ export function transportBlock(
       `with overheadPerBlock ${overheadPerBlock} fewer than the ${SUBCARRIERS * symbols} resource elements of ${symbols} symbols`,
     );
   }
-  const information = (Math.min(MOST_ELEMENTS, elements) * blocks * codeRate * modulationBits * layers) / 1024;
-  return information <= LARGEST_SMALL ? smallSize(information) : largeSize(information, codeRate <= 256);
+  const information = (Math.min(MOST_ELEMENTS, elements) * blocks * codeRate1024 * modulationBits * layers) / 1024;
+  return information <= LARGEST_SMALL ? smallSize(information) : largeSize(information, codeRate1024 <= 256);
 }
 
 /** Step 3. */
