@@ -19,6 +19,7 @@ export class NoAnswerError extends Error {
 const LONGEST_QUOTE = 40;
 
 function show(value: unknown): string {
+  if (value === undefined) return "missing";
   if (typeof value !== "string") return String(value);
   const text = value.length > LONGEST_QUOTE ? `${value.slice(0, LONGEST_QUOTE)}…` : value;
   return `the text "${text}"`;

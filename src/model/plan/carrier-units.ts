@@ -80,7 +80,7 @@ export function bearerUnits(scheme: Scheme, load: OfferedLoad): Units {
     const name = stream.service.service;
     throw new DomainError(
       `Services downKbps of ${name}`,
-      "missing",
+      undefined,
       `the rate of a call, which ${scheme.name} (OFDMA) needs`,
     );
   }

@@ -13,6 +13,7 @@ import * as timing from "../codes/timing";
 import { area as siteArea } from "../radio/cell";
 import * as link from "../radio/link";
 import * as noise from "../radio/noise";
+import * as pathLoss from "../radio/path-loss";
 import * as range from "../radio/range";
 import * as shadowing from "../radio/shadowing";
 import type { Assessment } from "./assessment";
@@ -34,33 +35,66 @@ export function radiusNeeded(areaKm2: number, sectors: number): number {
   return Math.sqrt((areaKm2 * sectors) / siteArea(1, sectors));
 }
 
-type Ranged = (lossDb: number) => number;
+/** Path loss of a scheme in one environment, both ways, and where the model's validity ends. */
+interface Propagation {
+  readonly farthestKm: number;
+  range(lossDb: number): number;
+  loss(distanceKm: number): number;
+}
 
-/** Distance at which the model of the scheme reaches a loss, in the environment of the cell. */
-function rangeOf(scheme: Scheme, environment: string): Ranged {
+type Numbers = readonly [frequencyMHz: number, baseHeightM: number, mobileHeightM: number];
+
+/** Farthest distance of each model's source, km. */
+const FARTHEST_KM = { hata: 20, cost231: 20, uma: 5, umi: 5, rma: 10, rmaHidden: 5 } as const;
+
+/** The path-loss model of the scheme, in the environment of the cell. */
+function propagation(scheme: Scheme, environment: string): Propagation {
   const model = scheme.text("pathLossModel", "").toLowerCase();
-  const frequency = (): number => scheme.required("frequencyMHz");
-  const base = (): number => scheme.required("baseHeightM");
-  const mobile = (): number => scheme.number("mobileHeightM", 1.5);
   // A cell may carry an environment of its own where the models differ in what they call theirs.
   const place = environment !== "" ? environment : scheme.text("environment", "");
+  const numbers = (): Numbers => [
+    scheme.required("frequencyMHz"),
+    scheme.required("baseHeightM"),
+    scheme.number("mobileHeightM", 1.5),
+  ];
+  const sight = scheme.text("sight", "nlos");
+  const of = (
+    farthestKm: number,
+    loss: (distanceKm: number, ...rest: [...Numbers, string]) => number,
+    ranged: (lossDb: number, ...rest: [...Numbers, string]) => number,
+    word: string,
+  ): Propagation => {
+    const facts = numbers();
+    return { farthestKm, range: (db) => ranged(db, ...facts, word), loss: (km) => loss(km, ...facts, word) };
+  };
   switch (model) {
-    case "freespace":
-      return (lossDb) => range.freeSpace(lossDb, frequency());
     case "hata":
-      return (lossDb) => range.hata(lossDb, frequency(), base(), mobile(), place || "urban");
+      return of(FARTHEST_KM.hata, pathLoss.hata, range.hata, place || "urban");
     case "cost231":
-      return (lossDb) =>
-        range.cost231(lossDb, frequency(), base(), mobile(), place === "metropolitan" ? place : "city");
+      return of(FARTHEST_KM.cost231, pathLoss.cost231, range.cost231, place === "metropolitan" ? place : "city");
     case "uma":
-      return (lossDb) => range.uma(lossDb, frequency(), base(), mobile(), scheme.text("sight", "nlos"));
+      return of(FARTHEST_KM.uma, pathLoss.uma, range.uma, sight);
     case "umi":
-      return (lossDb) => range.umi(lossDb, frequency(), base(), mobile(), scheme.text("sight", "nlos"));
+      return of(FARTHEST_KM.umi, pathLoss.umi, range.umi, sight);
     case "rma":
-      return (lossDb) => range.rma(lossDb, frequency(), base(), mobile(), scheme.text("sight", "nlos"));
-    default:
-      return (lossDb) =>
-        range.logDistance(lossDb, scheme.required("referenceLossDb"), scheme.number("pathLossExponent", 3.5));
+      return of(sight === "los" ? FARTHEST_KM.rma : FARTHEST_KM.rmaHidden, pathLoss.rma, range.rma, sight);
+    case "freespace": {
+      const frequency = scheme.required("frequencyMHz");
+      return {
+        farthestKm: Infinity,
+        range: (db) => range.freeSpace(db, frequency),
+        loss: (km) => pathLoss.freeSpace(km, frequency),
+      };
+    }
+    default: {
+      const reference = scheme.required("referenceLossDb");
+      const exponent = scheme.number("pathLossExponent", 3.5);
+      return {
+        farthestKm: Infinity,
+        range: (db) => range.logDistance(db, reference, exponent),
+        loss: (km) => pathLoss.logDistance(km, reference, exponent),
+      };
+    }
   }
 }
 
@@ -70,7 +104,7 @@ interface Receiver {
 }
 
 /** Bandwidth of the noise and SINR required there, for the most demanding service of a direction. */
-function receiver(scheme: Scheme, load: OfferedLoad, direction: "up" | "down"): Receiver {
+function receiver(scheme: Scheme, load: OfferedLoad, direction: "up" | "down"): Receiver | undefined {
   if (scheme.access === "CDMA") return codeReceiver(scheme, load, direction);
   const requiredSinrDb = scheme.required("requiredSinrDb");
   if (scheme.access !== "OFDMA") {
@@ -90,14 +124,16 @@ function streams(load: OfferedLoad): OfferedLoad["lost"][number]["service"][] {
   return load.dataService ? [...services, load.dataService] : services;
 }
 
-function codeReceiver(scheme: Scheme, load: OfferedLoad, direction: "up" | "down"): Receiver {
+/** Undefined where no service asks for anything. */
+function codeReceiver(scheme: Scheme, load: OfferedLoad, direction: "up" | "down"): Receiver | undefined {
   const bandwidthMHz = scheme.required("chipRateMcps");
   const needs = streams(load).map((service) => {
     const kbps = direction === "up" ? service.upKbps : service.downKbps;
     const down = Number.isNaN(service.downlinkEbN0Db) ? service.ebN0Db : service.downlinkEbN0Db;
     return sinr.fromEbN0(direction === "up" ? service.ebN0Db : down, bandwidthMHz, kbps);
   });
-  return { bandwidthMHz, requiredSinrDb: needs.length > 0 ? Math.max(...needs) : scheme.required("requiredSinrDb") };
+  const requiredSinrDb = needs.length > 0 ? Math.max(...needs) : scheme.optional("requiredSinrDb");
+  return requiredSinrDb === undefined ? undefined : { bandwidthMHz, requiredSinrDb };
 }
 
 function shadowMargin(scheme: Scheme): number {
@@ -126,10 +162,14 @@ function interferenceMargin(scheme: Scheme, assessment: Assessment, requiredSinr
   }
 }
 
-/** Reach of one direction; undefined below the nearest distance of the model, its farthest distance beyond it. */
-function reachOf(lossDb: number, ranged: Ranged): number | undefined {
+/**
+ * Reach of one direction; undefined below the nearest distance of the model, and its farthest distance where the budget
+ * would go beyond: a model is not stretched.
+ */
+function reachOf(lossDb: number, model: Propagation): number | undefined {
+  if (Number.isFinite(model.farthestKm) && lossDb >= model.loss(model.farthestKm)) return model.farthestKm;
   try {
-    return ranged(lossDb);
+    return model.range(lossDb);
   } catch (thrown) {
     if (thrown instanceof NoAnswerError) return undefined;
     throw thrown;
@@ -140,14 +180,11 @@ function reachOf(lossDb: number, ranged: Ranged): number | undefined {
  * Coverage of one scheme, the parts that no load changes computed once per environment.
  */
 export class Coverage {
-  private readonly known = new Map<string, Ranged>();
+  private readonly known = new Map<string, Propagation>();
   private readonly shadowDb: number;
   private readonly timingKm: number;
-  /** Whether the radio table holds a link budget for the scheme; without one, coverage is not judged. */
-  readonly judged: boolean;
 
   constructor(private readonly scheme: Scheme) {
-    this.judged = scheme.optional("eirpDbm") !== undefined || scheme.optional("uplinkEirpDbm") !== undefined;
     this.shadowDb = shadowMargin(scheme);
     const guard = scheme.optional("guardTimeUs");
     this.timingKm =
@@ -156,16 +193,17 @@ export class Coverage {
         : timing.radius(guard, scheme.number("advanceSteps", 0), scheme.number("stepUs", 0));
   }
 
-  private ranged(environment: string): Ranged {
+  private ranged(environment: string): Propagation {
     let found = this.known.get(environment);
     if (!found) {
-      found = rangeOf(this.scheme, environment);
+      found = propagation(this.scheme, environment);
       this.known.set(environment, found);
     }
     return found;
   }
 
-  reach(environment: string, load: OfferedLoad, assessment: Assessment): Reach {
+  /** Undefined where there is nothing to reach: no link budget, or no service that asks for anything. */
+  reach(environment: string, load: OfferedLoad, assessment: Assessment): Reach | undefined {
     const { scheme } = this;
     const directions: {
       by: "uplink range" | "downlink range";
@@ -189,9 +227,13 @@ export class Coverage {
     let radiusKm: number | undefined = this.timingKm;
     let by: Reach["by"] = "timing range";
     let interferenceMarginDb = 0;
+    let judged = false;
     for (const { by: direction, at, eirp, noiseFigure } of directions) {
       if (eirp === undefined) continue;
-      const { bandwidthMHz, requiredSinrDb } = receiver(scheme, load, at);
+      const wanted = receiver(scheme, load, at);
+      if (!wanted) continue;
+      const { bandwidthMHz, requiredSinrDb } = wanted;
+      judged = true;
       const interference = interferenceMargin(scheme, assessment, requiredSinrDb);
       if (interference === undefined) return { radiusKm: undefined, interferenceMarginDb, by: direction };
       // CDMA's noise rise is that of the base station's receiver; its downlink is a matter of load.
@@ -212,6 +254,7 @@ export class Coverage {
         if (reached === undefined) break;
       }
     }
-    return { radiusKm: radiusKm === Infinity ? undefined : radiusKm, interferenceMarginDb, by };
+    if (!judged) return undefined;
+    return { radiusKm, interferenceMarginDb, by };
   }
 }

@@ -29,7 +29,7 @@ function ratesOf(service: ServiceRow): { up: number; down: number } {
   const up = Number.isNaN(service.upKbps) ? service.downKbps : service.upKbps;
   const down = Number.isNaN(service.downKbps) ? service.upKbps : service.downKbps;
   if (Number.isNaN(up)) {
-    throw new DomainError(`Services upKbps of ${service.service}`, "missing", "the bearer rate, which CDMA needs");
+    throw new DomainError(`Services upKbps of ${service.service}`, undefined, "the bearer rate, which CDMA needs");
   }
   return { up, down };
 }
@@ -38,7 +38,7 @@ function ebN0Of(service: ServiceRow, direction: "up" | "down"): number {
   const down = Number.isNaN(service.downlinkEbN0Db) ? service.ebN0Db : service.downlinkEbN0Db;
   const value = direction === "up" ? service.ebN0Db : down;
   if (Number.isNaN(value)) {
-    throw new DomainError(`Services ebN0Db of ${service.service}`, "missing", "the required Eb/N0, which CDMA needs");
+    throw new DomainError(`Services ebN0Db of ${service.service}`, undefined, "the required Eb/N0, which CDMA needs");
   }
   return value;
 }

@@ -49,7 +49,7 @@ export function addLoad(
     else
       throw new DomainError(
         `Services target of ${service.service}`,
-        "missing",
+        undefined,
         "targetBlocking, or targetWaitS with targetWaitShare",
       );
     return;

@@ -28,7 +28,7 @@ export class Scheme {
   required(parameter: string): number {
     const value = this.number(parameter, NaN);
     if (Number.isNaN(value)) {
-      throw new DomainError(`Radio ${parameter} of ${this.name}`, "missing", `a value, which ${this.access} needs`);
+      throw new DomainError(`Radio ${parameter} of ${this.name}`, undefined, `a value, which ${this.access} needs`);
     }
     return value;
   }

@@ -199,7 +199,7 @@ function planRow(
   const state = capacity.assess(carriersInstalled);
   const capacityMet = required <= carriersInstalled;
   const needed = radiusNeeded(cell.areaKm2, sectors);
-  const reach = coverage.judged ? coverage.reach(cell.environment, load, state) : undefined;
+  const reach = coverage.reach(cell.environment, load, state);
   const coverageMet = reach === undefined || (reach.radiusKm !== undefined && reach.radiusKm >= needed);
   const channels = capacity.channels(carriersInstalled);
   return {
