@@ -1,4 +1,4 @@
-import { decibel, positive } from "../src/model/domain";
+import { decibel } from "../src/model/domain";
 import * as cost231 from "../src/model/radio/path-loss/cost231";
 import * as freeSpace from "../src/model/radio/path-loss/free-space";
 import * as hata from "../src/model/radio/path-loss/hata";
@@ -21,7 +21,7 @@ import { number, optionalChoice, optionalNumber, perCell } from "../src/sheet/ca
  */
 export function pathlossFreespace(distanceKm: any[][], frequencyMHz: any[][]): any[][] {
   return perCell(freeSpace.loss, {
-    distanceKm: number(distanceKm, positive),
+    distanceKm: number(distanceKm, freeSpace.distance),
     frequencyMHz: number(frequencyMHz, freeSpace.frequency),
   });
 }

@@ -1,4 +1,5 @@
-import { decibel, positive, share } from "../src/model/domain";
+import { decibel, share } from "../src/model/domain";
+import { bandwidth, bitRate } from "../src/model/interference/domains";
 import { pathLossExponent as exponents, sectorsOfSite } from "../src/model/interference/hexagon";
 import * as cell from "../src/model/radio/cell-efficiency";
 import { latticeCluster } from "../src/model/radio/local-sinr";
@@ -17,7 +18,7 @@ import { flag, number, optionalNumber, perCell, perCellRow } from "../src/sheet/
  * @example =CAP.RATE.SHANNON(10, 10) is 34.594
  */
 export function rateShannon(bandwidthMHz: any[][], sinrDb: any[][]): any[][] {
-  return perCell(rate.shannon, { bandwidthMHz: number(bandwidthMHz, positive), sinrDb: number(sinrDb, decibel) });
+  return perCell(rate.shannon, { bandwidthMHz: number(bandwidthMHz, bandwidth), sinrDb: number(sinrDb, decibel) });
 }
 
 /**
@@ -43,7 +44,7 @@ export function rateAttenuated(
   maximumBpsHz?: any[][],
 ): any[][] {
   return perCell(rate.attenuated, {
-    bandwidthMHz: number(bandwidthMHz, positive),
+    bandwidthMHz: number(bandwidthMHz, bandwidth),
     sinrDb: number(sinrDb, decibel),
     attenuation: optionalNumber(attenuation, rate.attenuationFactor, rate.DEFAULT_ATTENUATION),
     minimumDb: optionalNumber(minimumDb, decibel, rate.DEFAULT_MINIMUM_DB),
@@ -74,8 +75,8 @@ export function rateRequiredsinr(
   maximumBpsHz?: any[][],
 ): any[][] {
   return perCell(rate.requiredSinr, {
-    bandwidthMHz: number(bandwidthMHz, positive),
-    bitRateKbps: number(bitRateKbps, positive),
+    bandwidthMHz: number(bandwidthMHz, bandwidth),
+    bitRateKbps: number(bitRateKbps, bitRate),
     attenuation: optionalNumber(attenuation, rate.attenuationFactor, rate.DEFAULT_ATTENUATION),
     minimumDb: optionalNumber(minimumDb, decibel, rate.DEFAULT_MINIMUM_DB),
     maximumBpsHz: optionalNumber(maximumBpsHz, rate.maximumEfficiency, rate.DEFAULT_MAXIMUM_BPS_HZ),

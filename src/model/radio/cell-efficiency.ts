@@ -43,6 +43,11 @@ interface LinkCurve {
   readonly upper: number;
 }
 
+/** log(1 + SINR) from log SINR, which from 40 nepers on it equals to rounding and where the SINR itself may overflow. */
+function logOnePlus(logSinr: number): number {
+  return logSinr > 40 ? logSinr : Math.log1p(Math.exp(logSinr));
+}
+
 /** Averages over the cell, users who are not served counted as 0. */
 interface Averages {
   efficiency: number;
@@ -57,12 +62,16 @@ type Local = (logSinr: number, out: Averages) => void;
 function withoutShadowing({ perNeper, maximum, lower, upper }: LinkCurve): Local {
   return (logSinr, out) => {
     // Panels end on the kinks, where rounding must not decide: inside them the curve itself is meant.
-    const rate =
-      logSinr >= upper ? maximum : Math.min(maximum, perNeper * Math.log1p(Math.exp(Math.max(logSinr, lower))));
+    const rate = logSinr >= upper ? maximum : Math.min(maximum, perNeper * logOnePlus(Math.max(logSinr, lower)));
     out.efficiency = rate;
     out.served = 1;
     out.seconds = 1 / rate;
   };
+}
+
+/** Upper tail of the normal distribution; a tiny deviation makes arguments beyond any table. */
+function tailBeyond(z: number): number {
+  return z > 40 ? 0 : z < -40 ? 1 : upperTail(z);
 }
 
 /**
@@ -85,8 +94,8 @@ function withShadowing({ perNeper, maximum, lower, upper }: LinkCurve, deviation
   return (logSinr, out) => {
     const served = (lower - logSinr) / deviation;
     const capped = (upper - logSinr) / deviation;
-    const atMaximum = upperTail(capped);
-    out.served = upperTail(served);
+    const atMaximum = tailBeyond(capped);
+    out.served = tailBeyond(served);
     out.efficiency = maximum * atMaximum;
     out.seconds = atMaximum / maximum;
     const low = Math.max(served, floor);
@@ -97,7 +106,7 @@ function withShadowing({ perNeper, maximum, lower, upper }: LinkCurve, deviation
     const middle = 0.5 * (high + low);
     for (let k = 0; k < nodes.length; k++) {
       const z = middle + half * nodes[k]!;
-      const rate = perNeper * Math.log1p(Math.exp(logSinr + deviation * z));
+      const rate = perNeper * logOnePlus(logSinr + deviation * z);
       const weight = half * weights[k]! * density(z);
       out.efficiency += weight * rate;
       out.seconds += weight / rate;

@@ -1,5 +1,6 @@
-import { decibel, domain, positive, requireIn } from "../domain";
+import { decibel, domain, requireIn } from "../domain";
 import { NoAnswerError } from "../errors";
+import { bandwidth, bitRate } from "../interference/domains";
 import { fromDecibel, toDecibel } from "../numerics/decibel";
 
 /** Implementation loss against Shannon; above 1 where several layers share the band. */
@@ -16,11 +17,11 @@ export const DEFAULT_MAXIMUM_BPS_HZ = 4.4;
 /**
  * Shannon capacity of a band in Mbit/s.
  *
- * @param bandwidthMHz above 0
+ * @param bandwidthMHz 1e-9 to 1e9
  * @param sinrDb signal to noise and interference, -1000 to 1000 dB
  */
 export function shannon(bandwidthMHz: number, sinrDb: number): number {
-  requireIn(positive, "bandwidthMHz", bandwidthMHz);
+  requireIn(bandwidth, "bandwidthMHz", bandwidthMHz);
   requireIn(decibel, "sinrDb", sinrDb);
   return bandwidthMHz * efficiency(sinrDb);
 }
@@ -40,7 +41,7 @@ function requireLinkCurve(attenuation: number, minimumDb: number, maximumBpsHz: 
  * Rate of an adaptive link in Mbit/s: nothing below the minimum SINR, then attenuated Shannon up to a maximum
  * (3GPP TR 36.942 annex A.1).
  *
- * @param bandwidthMHz above 0
+ * @param bandwidthMHz 1e-9 to 1e9
  * @param sinrDb -1000 to 1000 dB
  * @param attenuation 0.01 to 10
  * @param minimumDb lowest SINR that is served, itself included
@@ -53,7 +54,7 @@ export function attenuated(
   minimumDb = DEFAULT_MINIMUM_DB,
   maximumBpsHz = DEFAULT_MAXIMUM_BPS_HZ,
 ): number {
-  requireIn(positive, "bandwidthMHz", bandwidthMHz);
+  requireIn(bandwidth, "bandwidthMHz", bandwidthMHz);
   requireIn(decibel, "sinrDb", sinrDb);
   requireLinkCurve(attenuation, minimumDb, maximumBpsHz);
   if (sinrDb < minimumDb) return 0;
@@ -63,8 +64,8 @@ export function attenuated(
 /**
  * Smallest SINR in dB at which `attenuated` reaches a bit rate; never below the minimum that is served.
  *
- * @param bandwidthMHz above 0
- * @param bitRateKbps above 0
+ * @param bandwidthMHz 1e-9 to 1e9
+ * @param bitRateKbps 1e-9 to 1e12
  * @param attenuation 0.01 to 10
  * @param minimumDb lowest SINR that is served
  * @param maximumBpsHz spectral efficiency of the highest modulation, above 0 to 100
@@ -77,8 +78,8 @@ export function requiredSinr(
   minimumDb = DEFAULT_MINIMUM_DB,
   maximumBpsHz = DEFAULT_MAXIMUM_BPS_HZ,
 ): number {
-  requireIn(positive, "bandwidthMHz", bandwidthMHz);
-  requireIn(positive, "bitRateKbps", bitRateKbps);
+  requireIn(bandwidth, "bandwidthMHz", bandwidthMHz);
+  requireIn(bitRate, "bitRateKbps", bitRateKbps);
   requireLinkCurve(attenuation, minimumDb, maximumBpsHz);
   const bpsHz = bitRateKbps / 1000 / bandwidthMHz;
   // A rate computed as bandwidth times maximum may lie a rounding above it.

@@ -190,7 +190,7 @@ describe("models against each other", () => {
 
 describe("no model is used outside its range", () => {
   test.each([
-    [() => pathLoss.freeSpace(0, 900), "distanceKm is 0; allowed: a number above 0."],
+    [() => pathLoss.freeSpace(0, 900), "distanceKm is 0; allowed: a distance above 0 and up to 1e9 km."],
     [() => pathLoss.freeSpace(1e-6, 900), "distanceKm is 0.000001; allowed: at least 0.0000265 km at 900 MHz"],
     [() => pathLoss.logDistance(1, 100, 0), "pathLossExponent is 0"],
     [() => pathLoss.hata(0.9, 900, 30, 1.5), "distanceKm is 0.9; allowed: a distance from 1 to 20 km."],
@@ -218,7 +218,7 @@ describe("no model is used outside its range", () => {
     [() => range.hata(100, 900, 30, 1.5), "lossDb 100 is outside what the model covers: 126.4"],
     [() => range.hata(200, 900, 30, 1.5), "dB at 20 km."],
     [() => range.umi(200, 3500, 10, 1.5), "lossDb 200 is outside what the model covers"],
-    [() => range.logDistance(1000, 0, 0.1), "outside 0 to 1e9 km"],
+    [() => range.logDistance(1000, 0, 0.1), "lossDb 1000 is reached at 1e1000 km, outside 1e-300 to 1e9 km."],
   ])("%#", (call, message) => {
     expect(call).toThrow(message);
   });

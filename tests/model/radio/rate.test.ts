@@ -109,7 +109,7 @@ describe("the link curve", () => {
   });
 
   test.each([
-    [() => rate.shannon(0, 3), "bandwidthMHz is 0; allowed: a number above 0."],
+    [() => rate.shannon(0, 3), "bandwidthMHz is 0; allowed: a bandwidth from 1E-9 to 1E+9 MHz."],
     [() => rate.shannon(1, NaN), "sinrDb is NaN"],
     [() => rate.attenuated(1, 3, 0), "attenuation is 0; allowed: a factor from 0.01 to 10."],
     [() => rate.attenuated(1, 3, 1, -1001), "minimumDb is -1001"],

@@ -1,5 +1,8 @@
-import { decibel, domain, positive, requireIn } from "../../domain";
+import { decibel, domain, requireIn } from "../../domain";
 import { DomainError } from "../../errors";
+import { distance } from "./log-distance";
+
+export { distance };
 
 const SPEED_OF_LIGHT = 299_792_458;
 /** 4 pi d f / c for a distance of 1 km and a frequency of 1 MHz. */
@@ -12,11 +15,11 @@ export const freeSpaceLoss = domain(0, decibel.high, "a loss from 0 to 1000 dB")
  * Free-space basic transmission loss in dB: 20 log10(4 pi d f / c), c = 299 792 458 m/s (Recommendation ITU-R P.525-4,
  * equation (3)).
  *
- * @param distanceKm above 0; at least wavelength / (4 pi), below which the formula turns into a gain
+ * @param distanceKm up to 1e9; at least wavelength / (4 pi), below which the formula turns into a gain
  * @param frequencyMHz above 0 and up to 1 000 000
  */
 export function loss(distanceKm: number, frequencyMHz: number): number {
-  requireIn(positive, "distanceKm", distanceKm);
+  requireIn(distance, "distanceKm", distanceKm);
   requireIn(frequency, "frequencyMHz", frequencyMHz);
   const turns = AT_ONE * distanceKm * frequencyMHz;
   if (!(turns >= 1)) {

@@ -2,6 +2,8 @@ import { decibel, domain, requireIn } from "../../domain";
 import { NoAnswerError } from "../../errors";
 
 export const distance = domain(0, 1e9, "a distance above 0 and up to 1e9 km", { openLow: true });
+const LARGEST_LOG = Math.log10(distance.high);
+const SMALLEST_LOG = -300;
 export const exponent = domain(0.1, 100, "a path-loss exponent from 0.1 to 100");
 
 /**
@@ -36,9 +38,9 @@ export function range(lossDb: number, referenceLossDb: number, pathLossExponent:
   requireIn(decibel, "referenceLossDb", referenceLossDb);
   requireIn(exponent, "pathLossExponent", pathLossExponent);
   requireIn(distance, "referenceKm", referenceKm);
-  const found = referenceKm * Math.pow(10, (lossDb - referenceLossDb) / (10 * pathLossExponent));
-  if (!(found > 0 && found <= distance.high)) {
-    throw new NoAnswerError(`lossDb ${lossDb} is reached at ${found} km, outside 0 to 1e9 km.`);
+  const log = Math.log10(referenceKm) + (lossDb - referenceLossDb) / (10 * pathLossExponent);
+  if (log > LARGEST_LOG || log < SMALLEST_LOG) {
+    throw new NoAnswerError(`lossDb ${lossDb} is reached at 1e${Math.round(log)} km, outside 1e-300 to 1e9 km.`);
   }
-  return found;
+  return referenceKm * Math.pow(10, (lossDb - referenceLossDb) / (10 * pathLossExponent));
 }
