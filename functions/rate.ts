@@ -98,7 +98,7 @@ export function rateRequiredsinr(
  * @returns Mean bit/s/Hz, users out of service counted as 0.
  * @method Mean over the hexagon of RATE.ATTENUATED at the local SINR: two tiers (18) of co-channel sites, interference scaled by the load, ideal sector beams with edges through corners of the hexagon. Shadowing: the user stays with the site of its hexagon and its SINR is lognormal around the local median. Gauss-Legendre quadrature along rays, split at the jump and the kink of the curve; relative error below 1E-5.
  * @source Hexagonal reuse: V. H. Mac Donald, The cellular concept, Bell System Technical Journal 58 (1979). Link curve: 3GPP TR 36.942, annex A.1.
- * @assumes A regular network, equal powers. What users of equal volume get is less: RATE.CELLCAPACITY.
+ * @assumes A regular network, equal powers. What users of equal volume get is less: RATE.CELLCAPACITY. Some hosts pass an empty cell as 0: for no noise leave edgeSnrDb out.
  * @errors #VALUE! for a cluster size that does not tile the plane or sectors other than 1, 3 and 6.
  * @example =CAP.RATE.CELLEFFICIENCY(3.5, 1) is 1.6091
  */
@@ -142,7 +142,7 @@ export function rateCellefficiency(
  * @returns Two numbers: harmonic mean bit/s/Hz over the served part, and the share served.
  * @method 1 / mean of 1/efficiency over the served users, the cell as in RATE.CELLEFFICIENCY: two tiers of co-channel sites, interference scaled by the load. Server under shadowing: the site of the hexagon in which the user stands; the SINR is lognormal around its local median, and who falls below the minimum is not served. Deterministic quadrature, relative error below 1E-5.
  * @source T. Bonald, A. Proutiere, Wireless downlink data channels: user performance and cell dimensioning, MobiCom 2003. Link curve: 3GPP TR 36.942, annex A.1.
- * @assumes Equal volumes wherever the user is, spread evenly; multiply by the bandwidth for the capacity in SHARING.THROUGHPUT. A real user may be served by a stronger neighbour, so the share served errs low.
+ * @assumes Equal volumes wherever the user is, spread evenly; multiply by the bandwidth for the capacity in SHARING.THROUGHPUT. A real user may be served by a stronger neighbour, so the share served errs low. Some hosts pass an empty cell as 0: for no noise leave edgeSnrDb out.
  * @errors #VALUE! for a cluster size that does not tile the plane or sectors other than 1, 3 and 6; #N/A where no part of the cell is served.
  * @example =CAP.RATE.CELLCAPACITY(3.5, 1) is 0.9681
  */
