@@ -125,7 +125,7 @@ export function pathlossCost231(
  * @param [sight] "los" with line of sight, "nlos" without; "nlos" if left out.
  * @returns Median path loss in dB.
  * @method los: 28 + 22 log d3 + 20 log f to the breakpoint 4 (hb - 1)(hm - 1) f / c with c = 3E8 as prescribed, then 28 + 40 log d3 + 20 log f - 9 log(dbp^2 + (hb - hm)^2); nlos: the larger of los and 13.54 + 39.08 log d3 + 20 log f - 0.6 (hm - 1.5); d3 the 3-D distance in m, f in GHz.
- * @source 3GPP TR 38.901, table 7.4.1-1, UMa.
+ * @source 3GPP TR 38.901 V19.4.0, table 7.4.1-1, UMa.
  * @assumes Environment height 1 m, which the report draws at random for mobiles above 13 m; heights other than 25 m enter the breakpoint and the 3-D distance only. Outdoor loss; shadowing comes on top.
  * @errors #VALUE! outside the ranges of the source: the model is not carried beyond them.
  * @example =CAP.PATHLOSS.UMA(0.5, 3500, 25, 1.5) is 129.92
@@ -156,7 +156,7 @@ export function pathlossUma(
  * @param [sight] "los" with line of sight, "nlos" without; "nlos" if left out.
  * @returns Median path loss in dB.
  * @method los: 32.4 + 21 log d3 + 20 log f to the breakpoint 4 (hb - 1)(hm - 1) f / c with c = 3E8 as prescribed, then 32.4 + 40 log d3 + 20 log f - 9.5 log(dbp^2 + (hb - hm)^2); nlos: the larger of los and 22.4 + 35.3 log d3 + 21.3 log f - 0.3 (hm - 1.5); d3 the 3-D distance in m, f in GHz.
- * @source 3GPP TR 38.901, table 7.4.1-1, UMi - street canyon.
+ * @source 3GPP TR 38.901 V19.4.0, table 7.4.1-1, UMi - street canyon.
  * @assumes Heights other than 10 m enter the breakpoint and the 3-D distance only. Outdoor loss; shadowing comes on top.
  * @errors #VALUE! outside the ranges of the source: the model is not carried beyond them.
  * @example =CAP.PATHLOSS.UMI(0.2, 3500, 10, 1.5) is 115.23
@@ -187,7 +187,7 @@ export function pathlossUmi(
  * @param [sight] "los" with line of sight, "nlos" without; "nlos" if left out.
  * @returns Median path loss in dB.
  * @method los: 20 log(40 pi d3 f / 3) + min(0.03 h^1.72, 10) log d3 - min(0.044 h^1.72, 14.77) + 0.002 log(h) d3 to the breakpoint 2 pi hb hm f / c with c = 3E8 as prescribed, then 40 dB a decade; nlos: the larger of los and the report's second line; street width 20 m, buildings h = 5 m.
- * @source 3GPP TR 38.901, table 7.4.1-1, RMa.
+ * @source 3GPP TR 38.901 V19.4.0, table 7.4.1-1, RMa.
  * @assumes The report's default street width and building height. Above 7 GHz it rests on a single campaign of measurements. Shadowing comes on top.
  * @errors #VALUE! outside the ranges of the source: the model is not carried beyond them.
  * @example =CAP.PATHLOSS.RMA(2, 700, 35, 1.5) is 128.07

@@ -16,6 +16,7 @@ import { number, optionalChoice, optionalNumber, perCell } from "../src/sheet/ca
  * @method 10^(loss/20) c / (4 pi f).
  * @source Recommendation ITU-R P.525, free-space basic transmission loss.
  * @assumes As PATHLOSS.FREESPACE. Licence and exposure limits for the radiated power are local law and govern.
+ * @errors #N/A beyond 1E9 km.
  * @example =CAP.RANGE.FREESPACE(120, 900) is 26.5075
  */
 export function rangeFreespace(lossDb: any[][], frequencyMHz: any[][]): any[][] {
@@ -125,7 +126,7 @@ export function rangeCost231(
  * @param [sight] "los" with line of sight, "nlos" without; "nlos" if left out.
  * @returns Distance in km. Along the ground.
  * @method Root search over the whole range of PATHLOSS.UMA, breakpoint included.
- * @source 3GPP TR 38.901, table 7.4.1-1, UMa.
+ * @source 3GPP TR 38.901 V19.4.0, table 7.4.1-1, UMa.
  * @assumes As PATHLOSS.UMA. Licence and exposure limits for the radiated power are local law and govern.
  * @errors #VALUE! outside the ranges of the source; #N/A where the loss is not between those at 0.01 and 5 km; the message gives both.
  * @example =CAP.RANGE.UMA(130, 3500, 25, 1.5) is 0.5025
@@ -156,7 +157,7 @@ export function rangeUma(
  * @param [sight] "los" with line of sight, "nlos" without; "nlos" if left out.
  * @returns Distance in km. Along the ground.
  * @method Root search over the whole range of PATHLOSS.UMI, breakpoint included.
- * @source 3GPP TR 38.901, table 7.4.1-1, UMi - street canyon.
+ * @source 3GPP TR 38.901 V19.4.0, table 7.4.1-1, UMi - street canyon.
  * @assumes As PATHLOSS.UMI. Licence and exposure limits for the radiated power are local law and govern.
  * @errors #VALUE! outside the ranges of the source; #N/A where the loss is not between those at 0.01 and 5 km; the message gives both.
  * @example =CAP.RANGE.UMI(120, 3500, 10, 1.5) is 0.2731
@@ -187,7 +188,7 @@ export function rangeUmi(
  * @param [sight] "los" with line of sight, "nlos" without; "nlos" if left out.
  * @returns Distance in km. Along the ground.
  * @method Root search over the whole range of PATHLOSS.RMA, breakpoint included.
- * @source 3GPP TR 38.901, table 7.4.1-1, RMa.
+ * @source 3GPP TR 38.901 V19.4.0, table 7.4.1-1, RMa.
  * @assumes As PATHLOSS.RMA. Licence and exposure limits for the radiated power are local law and govern.
  * @errors #VALUE! outside the ranges of the source; #N/A where the loss is not between those at 0.01 km and 10 km ("los") or 5 km ("nlos"); the message gives both.
  * @example =CAP.RANGE.RMA(140, 700, 35, 1.5) is 4.0732

@@ -46,7 +46,8 @@ export function legendre(points: number): Rule {
  * Integral of a smooth function by one Gauss-Legendre rule.
  *
  * @param f analytic near the interval
- * @param low, high ends
+ * @param low one end
+ * @param high the other end
  * @param points number of evaluations
  */
 export function integrate(f: (x: number) => number, low: number, high: number, points: number): number {
@@ -97,7 +98,8 @@ function kronrod(f: (x: number) => number, low: number, high: number): Piece {
  * until the sum of the estimates is small enough.
  *
  * @param f finite on the interval
- * @param low, high ends
+ * @param low one end
+ * @param high the other end
  * @param relativeError wanted error relative to the result; the estimate is pessimistic by far for smooth functions
  * @param mostPieces bound of the work: 15 evaluations a piece, two pieces a halving
  */

@@ -244,6 +244,7 @@ const NO_SHADOWING = 1e-3;
 /**
  * The averages behind `cellEfficiency` and `cellCapacity`, without memory.
  *
+ * @param parameters of the cell and the link curve
  * @param detail factor on the number of nodes in every direction: 1 is meant, 2 and more show what 1 is worth
  */
 export function cellAverages(parameters: CellParameters, detail = 1): Averages {
@@ -310,7 +311,9 @@ function remembered(parameters: CellParameters): Averages {
  * @param edgeSnrDb median signal to noise at the corner of the hexagon; left out: no noise
  * @param shadowingDb standard deviation of the SINR around its local median, 0 to 20; the user stays with the site in whose
  *   hexagon it stands
- * @param attenuation, minimumDb, maximumBpsHz link curve as in `rate.attenuated`
+ * @param attenuation as in `rate.attenuated`
+ * @param minimumDb as in `rate.attenuated`
+ * @param maximumBpsHz as in `rate.attenuated`
  */
 export function cellEfficiency(
   pathLossExponent: number,

@@ -136,8 +136,9 @@ const LOWEST_DB = -400;
 /**
  * Eb/N0 in dB at which a modulation has a bit error rate: the inverse of `ber`.
  *
- * @param modulation, channel as in `ber`
+ * @param modulation as in `ber`
  * @param ber 1e-300 to below 0.5
+ * @param channel as in `ber`
  * @throws NoAnswerError where more than 1000 dB would be needed (Rayleigh fading, rates below 1e-100)
  */
 export function ebN0(modulation: string, ber: number, channel: string = "awgn"): number {

@@ -58,7 +58,10 @@ export function loss(
  * Distance in km at which the COST 231 formula reaches a loss.
  *
  * @param lossDb loss between those at 1 and 20 km
- * @param frequencyMHz, baseHeightM, mobileHeightM, environment as in `loss`
+ * @param frequencyMHz as in `loss`
+ * @param baseHeightM as in `loss`
+ * @param mobileHeightM as in `loss`
+ * @param environment as in `loss`
  * @throws NoAnswerError with the losses at 1 and 20 km where the loss lies outside them
  */
 export function range(

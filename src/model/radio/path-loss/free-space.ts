@@ -1,5 +1,5 @@
 import { decibel, domain, requireIn } from "../../domain";
-import { DomainError } from "../../errors";
+import { DomainError, NoAnswerError } from "../../errors";
 import { distance } from "./log-distance";
 
 export { distance };
@@ -38,9 +38,14 @@ export function loss(distanceKm: number, frequencyMHz: number): number {
  *
  * @param lossDb 0 to 1000 dB
  * @param frequencyMHz above 0 and up to 1 000 000
+ * @throws NoAnswerError beyond 1e9 km
  */
 export function range(lossDb: number, frequencyMHz: number): number {
   requireIn(freeSpaceLoss, "lossDb", lossDb);
   requireIn(frequency, "frequencyMHz", frequencyMHz);
-  return Math.pow(10, lossDb / 20) / (AT_ONE * frequencyMHz);
+  const found = Math.pow(10, lossDb / 20) / (AT_ONE * frequencyMHz);
+  if (found > distance.high) {
+    throw new NoAnswerError(`lossDb ${lossDb} at ${frequencyMHz} MHz is reached at ${found} km, beyond 1e9 km.`);
+  }
+  return found;
 }

@@ -30,7 +30,9 @@ export function loss(distanceKm: number, referenceLossDb: number, pathLossExpone
  * Distance in km of a log-distance loss.
  *
  * @param lossDb -1000 to 1000 dB
- * @param referenceLossDb, pathLossExponent, referenceKm as in `loss`
+ * @param referenceLossDb as in `loss`
+ * @param pathLossExponent as in `loss`
+ * @param referenceKm as in `loss`
  * @throws NoAnswerError where the distance is no number to work with
  */
 export function range(lossDb: number, referenceLossDb: number, pathLossExponent: number, referenceKm = 1): number {

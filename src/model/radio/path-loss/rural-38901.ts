@@ -1,5 +1,5 @@
 /*
- * Rural macro cells (RMa) of 3GPP TR 38.901, table 7.4.1-1, with the report's default street width and building height.
+ * Rural macro cells (RMa) of 3GPP TR 38.901 V19.4.0, table 7.4.1-1, with the report's default street width and building height.
  */
 import { domain, requireIn, requireOneOf } from "../../domain";
 import { DomainError } from "../../errors";
@@ -78,7 +78,10 @@ export function loss(
  * 2-D distance in km at which the loss of a rural macro cell is reached.
  *
  * @param lossDb loss between those at the ends of the model's range
- * @param frequencyMHz, baseHeightM, mobileHeightM, sight as in `loss`
+ * @param frequencyMHz as in `loss`
+ * @param baseHeightM as in `loss`
+ * @param mobileHeightM as in `loss`
+ * @param sight as in `loss`
  * @throws NoAnswerError with the losses at both ends where the loss lies outside them
  */
 export function range(

@@ -1,5 +1,5 @@
 /*
- * Urban models of 3GPP TR 38.901 ("Study on channel model for frequencies from 0.5 to 100 GHz"), table 7.4.1-1: macro cells
+ * Urban models of 3GPP TR 38.901 V19.4.0 ("Study on channel model for frequencies from 0.5 to 100 GHz"), table 7.4.1-1: macro cells
  * (UMa) and street canyons (UMi) differ in constants only.
  */
 import { domain, requireIn, requireOneOf, type Domain } from "../../domain";
@@ -68,13 +68,25 @@ export interface UrbanModel {
    * @param mobileHeightM 1.5 to 22.5
    * @param sight "los" or "nlos"
    */
-  loss(distanceKm: number, frequencyMHz: number, baseHeightM: number, mobileHeightM: number, sight?: string): number;
+  readonly loss: (
+    distanceKm: number,
+    frequencyMHz: number,
+    baseHeightM: number,
+    mobileHeightM: number,
+    sight?: string,
+  ) => number;
   /**
    * 2-D distance in km at which the loss is reached.
    *
    * @throws NoAnswerError with the losses at 0.01 and 5 km where the loss lies outside them
    */
-  range(lossDb: number, frequencyMHz: number, baseHeightM: number, mobileHeightM: number, sight?: string): number;
+  readonly range: (
+    lossDb: number,
+    frequencyMHz: number,
+    baseHeightM: number,
+    mobileHeightM: number,
+    sight?: string,
+  ) => number;
 }
 
 function urbanModel(constants: Constants): UrbanModel {
