@@ -17,7 +17,8 @@ function congestionOf(sources: number, trafficPerIdleSourceE: number, channels: 
   if (channels >= sources + 1) return 0;
   if (trafficPerIdleSourceE === 0) return channels === 0 ? 1 : 0;
   if (channels > RECURSION_TO || !Number.isInteger(channels)) {
-    return 1 / sumOverTerm(sources, channels, trafficPerIdleSourceE);
+    // With hardly a channel rounding may take the quotient above 1.
+    return Math.min(1, 1 / sumOverTerm(sources, channels, trafficPerIdleSourceE));
   }
   let congestion = 1;
   for (let n = 1; n <= channels; n++) {
