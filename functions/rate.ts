@@ -1,8 +1,6 @@
 import { decibel, share } from "../src/model/domain";
 import { bandwidth, bitRate } from "../src/model/interference/domains";
 import { pathLossExponent as exponents, sectorsOfSite } from "../src/model/interference/hexagon";
-import * as cell from "../src/model/radio/cell-efficiency";
-import { latticeCluster } from "../src/model/radio/local-sinr";
 import * as rate from "../src/model/radio/rate";
 import { flag, number, optionalNumber, perCell, perCellRow } from "../src/sheet/call";
 
@@ -113,13 +111,13 @@ export function rateCellefficiency(
   minimumDb?: any[][],
   maximumBpsHz?: any[][],
 ): any[][] {
-  return perCell(cell.cellEfficiency, {
+  return perCell(rate.cellEfficiency, {
     pathLossExponent: number(pathLossExponent, exponents),
-    clusterSize: number(clusterSize, latticeCluster),
+    clusterSize: number(clusterSize, rate.latticeCluster),
     sectors: optionalNumber(sectors, sectorsOfSite, 1),
     load: optionalNumber(load, share, 1),
     edgeSnrDb: optionalNumber(edgeSnrDb, decibel),
-    shadowingDb: optionalNumber(shadowingDb, cell.shadowingDeviation, 0),
+    shadowingDb: optionalNumber(shadowingDb, rate.shadowingDeviation, 0),
     attenuation: optionalNumber(attenuation, rate.attenuationFactor, rate.DEFAULT_ATTENUATION),
     minimumDb: optionalNumber(minimumDb, decibel, rate.DEFAULT_MINIMUM_DB),
     maximumBpsHz: optionalNumber(maximumBpsHz, rate.maximumEfficiency, rate.DEFAULT_MAXIMUM_BPS_HZ),
@@ -159,15 +157,15 @@ export function rateCellcapacity(
   labels?: any[][],
 ): any[][] {
   return perCellRow(
-    cell.cellCapacity,
-    cell.CELL_CAPACITY_COLUMNS,
+    rate.cellCapacity,
+    rate.CELL_CAPACITY_COLUMNS,
     {
       pathLossExponent: number(pathLossExponent, exponents),
-      clusterSize: number(clusterSize, latticeCluster),
+      clusterSize: number(clusterSize, rate.latticeCluster),
       sectors: optionalNumber(sectors, sectorsOfSite, 1),
       load: optionalNumber(load, share, 1),
       edgeSnrDb: optionalNumber(edgeSnrDb, decibel),
-      shadowingDb: optionalNumber(shadowingDb, cell.shadowingDeviation, 0),
+      shadowingDb: optionalNumber(shadowingDb, rate.shadowingDeviation, 0),
       attenuation: optionalNumber(attenuation, rate.attenuationFactor, rate.DEFAULT_ATTENUATION),
       minimumDb: optionalNumber(minimumDb, decibel, rate.DEFAULT_MINIMUM_DB),
       maximumBpsHz: optionalNumber(maximumBpsHz, rate.maximumEfficiency, rate.DEFAULT_MAXIMUM_BPS_HZ),

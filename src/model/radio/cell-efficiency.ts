@@ -11,7 +11,7 @@ import {
   DEFAULT_MINIMUM_DB,
   maximumEfficiency,
   sinrOfBits,
-} from "./rate";
+} from "./link-curve";
 
 export const shadowingDeviation = domain(0, 20, "a standard deviation from 0 to 20 dB");
 

@@ -1,5 +1,5 @@
 import fc from "fast-check";
-import * as rate from "../../../src/model/radio/rate";
+import * as rate from "../../../src/model/radio/link-curve";
 import { published, publishedValue, title } from "../../checks/published";
 import reference from "../../fixtures/radio/coverage-and-loss.json";
 import { relativeError } from "../../support/relative-error";
