@@ -10,7 +10,7 @@ import { storedCalls } from "../stored-names";
 import { runCalculation, type Book, type Cell, type Sheet } from "./library";
 import { remembering } from "./memo";
 import { engineFunctions } from "./own-functions";
-import { findCircle, type Area, type FormulaNode } from "./references";
+import { areasOf, findCircle, type Area, type FormulaNode } from "./references";
 
 export type Value = number | string | boolean | CellError | null;
 
@@ -151,6 +151,67 @@ function withoutSpillReferences(formula: Formula, at: ReadonlyMap<string, Formul
   });
 }
 
+const WHOLE_COLUMNS = /((?:'(?:[^']|'')+'|[A-Za-z_][\w.]*)!)?(\$?[A-Z]{1,3}):(\$?[A-Z]{1,3})(?![\w(.$])/g;
+
+/** Bounds whole-column references by the last row in use; the engine would look only as far as the file reached before. */
+function withBoundedColumns(text: string, ownSheet: string, lastRows: ReadonlyMap<string, number>): string {
+  return text
+    .split(/("(?:[^"]|"")*")/)
+    .map((part, i) =>
+      i % 2 === 1
+        ? part
+        : part.replace(WHOLE_COLUMNS, (_, prefix: string | undefined, first: string, last: string) => {
+            const sheet = prefix ? prefix.slice(0, -1).replace(/^'|'$/g, "").replace(/''/g, "'") : ownSheet;
+            return `${prefix ?? ""}${first}1:${last}${lastRows.get(sheet.toLowerCase()) ?? 1}`;
+          }),
+    )
+    .join("");
+}
+
+/**
+ * Makes a formula wait for the spills that it reads without their first cell: the engine orders formulas by the cells that
+ * they name, and does not know that a spilled cell comes from its anchor.
+ */
+function waitingForSpills(
+  text: string,
+  formula: Formula,
+  spills: readonly Formula[],
+  names: ReadonlyMap<string, Area>,
+): string {
+  if (spills.length === 0) return text;
+  const areas = areasOf(text, formula.sheet.name, names);
+  const awaited = spills.filter((spill) => {
+    if (spill === formula) return false;
+    const sheet = spill.sheet.name.toLowerCase();
+    return areas.some((area) => {
+      if (area.sheet.toLowerCase() !== sheet) return false;
+      const meets =
+        area.top < spill.row + spill.rows &&
+        area.bottom >= spill.row &&
+        area.left < spill.column + spill.columns &&
+        area.right >= spill.column;
+      const holdsAnchor =
+        area.top <= spill.row && area.bottom >= spill.row && area.left <= spill.column && area.right >= spill.column;
+      return meets && !holdsAnchor;
+    });
+  });
+  if (awaited.length === 0) return text;
+  const anchors = awaited.map(
+    ({ sheet, row, column }) => `ROWS('${sheet.name.replace(/'/g, "''")}'!${addressOf(row, column)})`,
+  );
+  return `IF(${anchors.join("+")}>0,${text})`;
+}
+
+/** Last row in use of each sheet, spills included. */
+function lastRowsOf(book: Book, formulas: readonly Formula[]): Map<string, number> {
+  const rows = new Map(book.worksheets.map((sheet) => [sheet.name.toLowerCase(), Math.max(1, sheet.rowCount)]));
+  for (const { sheet, row, rows: height } of formulas) {
+    const name = sheet.name.toLowerCase();
+    rows.set(name, Math.max(rows.get(name) ?? 1, row + height - 1));
+  }
+  return rows;
+}
+
 /** Empties formula results and the cells that the last spill left, so that nothing old can pass for new. */
 function clear(formulas: readonly Formula[]): void {
   const anchors = new Set(formulas.map(({ sheet, row, column }) => `${sheet.name}!${keyOf(row, column)}`));
@@ -282,14 +343,18 @@ export function calculate(book: Book, functions: FunctionTable): Outcome {
     formulas.map((formula) => [`${formula.sheet.name.toLowerCase()}!${keyOf(formula.row, formula.column)}`, formula]),
   );
   const oldGhosts = valuesOf(formulas);
+  const names = namedAreas(book);
   let before: ReturnType<typeof valuesOf> = new Map();
   for (let pass = 1; ; pass++) {
     if (pass > MOST_PASSES)
       throw new WorkbookFailure("the workbook's values never settle; its formulas change each other.");
     messages.clear();
     clear(formulas);
+    const lastRows = lastRowsOf(book, formulas);
+    const spills = formulas.filter(({ rows, columns }) => rows * columns > 1);
     for (const formula of formulas) {
-      const text = withoutSpillReferences(formula, at);
+      const bounded = withBoundedColumns(withoutSpillReferences(formula, at), formula.sheet.name, lastRows);
+      const text = waitingForSpills(bounded, formula, spills, names);
       if (text !== formula.cell.formula)
         formula.cell.value = { ...(formula.cell.value as object), formula: text, result: undefined } as never;
     }

@@ -1,0 +1,21 @@
+/** Names of the sheets of a plan workbook, in the order of the work. */
+export const SHEETS = {
+  purpose: "Purpose",
+  forecast: "Forecast",
+  services: "Services",
+  routing: "Routing",
+  radio: "Radio",
+  cells: "Cells",
+  installed: "Installed",
+  ladder: "Ladder",
+  traffic: "Traffic",
+  plan: "Plan",
+  summary: "Summary",
+  dashboard: "Dashboard",
+  method: "Method",
+  checks: "Checks",
+  changes: "Changes",
+  formulas: "Formulas",
+} as const;
+
+export const CHANGES_HEADINGS = ["cell", "year", "scheme", "column", "before", "after", "change"];
