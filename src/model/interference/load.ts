@@ -22,7 +22,7 @@ function services(
   const lists = { bitRateKbps, activity, users };
   for (const [name, list] of Object.entries(lists)) {
     if (list.length !== ebN0Db.length) {
-      throw new DomainError(name, `a list of ${list.length}`, `as many as ebN0Db, ${ebN0Db.length}`);
+      throw new DomainError(`number of ${name}`, list.length, `${ebN0Db.length}, as many as ebN0Db`);
     }
   }
   return ebN0Db.map((needed, i) => {

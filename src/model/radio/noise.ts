@@ -40,9 +40,9 @@ export function floor(
  */
 export function cascade(gainDb: readonly number[], noiseFigureDb: readonly number[]): number {
   if (gainDb.length !== noiseFigureDb.length) {
-    throw new DomainError("noiseFigureDb", `a list of ${noiseFigureDb.length}`, `as many as gainDb, ${gainDb.length}`);
+    throw new DomainError("number of noiseFigureDb", noiseFigureDb.length, `${gainDb.length}, as many as gainDb`);
   }
-  if (gainDb.length === 0) throw new DomainError("gainDb", "empty", "one gain a stage");
+  if (gainDb.length === 0) throw new DomainError("number of gainDb", 0, "one a stage");
   // Excess noise of each stage referred to the input, in decibel, since a long chain of losses overflows otherwise.
   const excess: number[] = [];
   let gainBefore = 0;

@@ -34,6 +34,6 @@ export function ratio(db: number): number {
  * @throws DomainError naming the parameter
  */
 export function requireEach(levels: readonly number[], parameter: string): void {
-  if (levels.length === 0) throw new DomainError(parameter, "empty", decibel.words);
+  if (levels.length === 0) throw new DomainError(`number of ${parameter}`, 0, "at least 1");
   for (const level of levels) requireIn(decibel, parameter, level);
 }

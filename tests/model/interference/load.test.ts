@@ -138,6 +138,8 @@ test("errors name the parameter", () => {
     "activity is 1.5; allowed: a share from 0 to 1.",
   );
   expect(() => load.uplink([5], [12.2], [0.5], [1], 3.84, -1)).toThrow("otherCellRatio is -1");
-  expect(() => load.uplink([5, 6], [12.2], [0.5], [1], 3.84, 0.5)).toThrow('bitRateKbps is the text "a list of 1"');
+  expect(() => load.uplink([5, 6], [12.2], [0.5], [1], 3.84, 0.5)).toThrow(
+    "number of bitRateKbps is 1; allowed: 2, as many as ebN0Db.",
+  );
   expect(() => load.downlink([5], [12.2], [0.5], [1], 3.84, 0.5, 2)).toThrow(DomainError);
 });
