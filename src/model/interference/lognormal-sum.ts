@@ -54,31 +54,69 @@ function exceedanceNearNormal(margin: number, deviation: number, count: number):
   return Math.min(1, Math.max(0, sum));
 }
 
+const MOST_A = 0.75;
+const CONTOURS = 12;
+
 function inverseTransform(margin: number, deviation: number, count: number): number {
   const s2 = deviation * deviation;
-  // Fenton's deviation of the sum places the contour near the saddle point; any a from 0 to 1 is exact.
+  // Fenton's deviation of the sum places the contour near the saddle point; any a from 0 to 1 is exact. A few contours
+  // serve all margins, so that a column of margins shares their transforms.
   const sumVariance = Math.log1p(Math.expm1(Math.min(s2, 50)) / count);
   const middle = Math.max(0, (s2 - sumVariance) / 2);
-  const least = 0.3 / (Math.SQRT2 * deviation);
-  const a = Math.min(0.75, Math.max(least, (margin - middle) / (s2 + sumVariance)));
-  const lastT = WIDEST / deviation;
-  const period = 24 * Math.SQRT2 * deviation + Math.abs(margin) + s2 / 2;
-  const stepT = (2 * Math.PI) / period;
+  const least = Math.min(MOST_A, 0.3 / (Math.SQRT2 * deviation));
+  const near = Math.min(1, Math.max(0, ((margin - middle) / (s2 + sumVariance) - least) / (MOST_A - least)));
+  const a = least + ((MOST_A - least) * Math.round(near * CONTOURS)) / CONTOURS;
 
-  const ray = transformOnRay(deviation, count, a, lastT);
-  let sum = 0;
-  for (let k = 0; k * stepT < lastT; k++) {
-    const t = k * stepT;
-    const { re, im } = ray.at(t);
-    const gamma = logGamma(1 - a, -t);
-    const logSize = 0.5 * s2 * (a * a - t * t) - margin * a - gamma.re;
-    const phase = s2 * a * t - margin * t - gamma.im;
-    const size = Math.exp(logSize + ray.logScale(t));
-    const real = size * (re * Math.cos(phase) - im * Math.sin(phase));
-    sum += k === 0 ? 0.5 * real : real;
+  const { stepT, re, im } = remembered(deviation, count, a);
+  let sum = 0.5 * re[0]!;
+  for (let k = 1; k < re.length; k++) {
+    const phase = margin * k * stepT;
+    sum += re[k]! * Math.cos(phase) + im[k]! * Math.sin(phase);
   }
   // The rule counts the probability at margins one and more periods lower as well: there it is 1, with weights exp(-a period).
-  return (sum * stepT) / Math.PI - 1 / Math.expm1(a * period);
+  return (Math.exp(-margin * a) * sum * stepT) / Math.PI - 1 / Math.expm1((a * 2 * Math.PI) / stepT);
+}
+
+/** The transform of the ratio over its factor z, along the contour. */
+interface Spectrum {
+  readonly stepT: number;
+  readonly re: Float64Array;
+  readonly im: Float64Array;
+}
+
+const spectra = new Map<string, Spectrum>();
+const MOST_REMEMBERED = 4 * CONTOURS;
+
+function remembered(deviation: number, count: number, a: number): Spectrum {
+  const key = `${deviation} ${count} ${a}`;
+  let known = spectra.get(key);
+  if (!known) {
+    known = spectrum(deviation, count, a);
+    if (spectra.size >= MOST_REMEMBERED) spectra.clear();
+    spectra.set(key, known);
+  }
+  return known;
+}
+
+function spectrum(deviation: number, count: number, a: number): Spectrum {
+  const s2 = deviation * deviation;
+  const lastT = WIDEST / deviation;
+  // Wide enough for all margins that reach this point, and for the tails on either side.
+  const stepT = (2 * Math.PI) / (34 * Math.SQRT2 * deviation + s2);
+  const points = Math.ceil(lastT / stepT);
+  const re = new Float64Array(points);
+  const im = new Float64Array(points);
+  const ray = transformOnRay(deviation, count, a, lastT);
+  for (let k = 0; k < points; k++) {
+    const t = k * stepT;
+    const value = ray.at(t);
+    const gamma = logGamma(1 - a, -t);
+    const size = Math.exp(0.5 * s2 * (a * a - t * t) - gamma.re + ray.logScale(t));
+    const phase = s2 * a * t - gamma.im;
+    re[k] = size * (value.re * Math.cos(phase) - value.im * Math.sin(phase));
+    im[k] = size * (value.re * Math.sin(phase) + value.im * Math.cos(phase));
+  }
+  return { stepT, re, im };
 }
 
 /** The integral of e^(-z (v + i angle)) (1 - phi(e^(v + i angle)/count)^count) over all v, for z = a + it. */

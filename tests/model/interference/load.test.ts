@@ -55,6 +55,13 @@ describe("uplink load beside published values", () => {
     },
   );
 
+  test(title(publishedValue("CD-02")), () => {
+    const { W_Hz, R_bps, EbN0_linear, activity, sectors } = publishedValue("CD-02").inputs as Record<string, number>;
+    const db = 10 * Math.log10(EbN0_linear!);
+    const perUser = load.uplink([db], [R_bps! / 1000], [activity!], [1], W_Hz! / 1e6, 0);
+    within(publishedValue("CD-02"), sectors! / perUser);
+  });
+
   test(title(publishedValue("CD-01")), () => {
     const { W_Hz, R_bps, EbN0_linear } = publishedValue("CD-01").inputs as Record<string, number>;
     const perUser = load.uplink([10 * Math.log10(EbN0_linear!)], [R_bps! / 1000], [1], [1], W_Hz! / 1e6, 0);

@@ -115,6 +115,19 @@ describe("as seen from a corner of the hexagon", () => {
     },
   );
 
+  test.each(published("FT-21", "FT-22", "FT-23", "FT-24").map((entry) => [title(entry), entry] as const))(
+    "%s: the textbook's q and q + 0.7 are within 1 dB of one of the sector's corners, and the worst is no better",
+    (_, { id, inputs, expected }) => {
+      const size = inputs["N_cluster"] as number;
+      const sectors = id < "FT-23" ? 3 : 6;
+      const places = heardAtCorner(latticeSteps(size)[0]!, sectors).map(
+        (distances) => -10 * Math.log10(total(distances)),
+      );
+      expect(Math.min(...places.map((place) => Math.abs(place - expected)))).toBeLessThan(1);
+      expect(reuse(size, 4, sectors, 1, undefined, "corner")).toBeCloseTo(Math.min(...places), 10);
+    },
+  );
+
   test("the centre flatters small clusters, and less so large ones", () => {
     const flattery = [1, 3, 7, 21, 93].map((size) => reuse(size, 4) - reuse(size, 4, 1, 1, undefined, "corner"));
     flattery.forEach((gap, k) => expect(gap).toBeLessThan(k === 0 ? Infinity : flattery[k - 1]!));

@@ -26,6 +26,13 @@ describe("noise floor beside published values", () => {
   test(title(publishedValue("LB-02")), () => within(publishedValue("LB-02"), noise.floor(1e-6, 0)));
   test(title(publishedValue("LB-03")), () => within(publishedValue("LB-03"), noise.floor(1e-6, 0, 293)));
 
+  test(title(publishedValue("LB-18")), () => {
+    const { expected } = publishedValue("LB-18");
+    const { NF_dB, T0_K } = publishedValue("LB-18").inputs as Record<string, number>;
+    // A noise figure is that much temperature more at the input.
+    expect(noise.floor(1, NF_dB!, T0_K)).toBeCloseTo(noise.floor(1, 0, T0_K! + expected), 9);
+  });
+
   test(title(publishedValue("LB-17")), () => {
     const entry = publishedValue("LB-17");
     const { F_linear, T0_K, Tant_K, B_Hz } = entry.inputs as Record<string, number>;
