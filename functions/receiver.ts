@@ -18,7 +18,7 @@ import { errorCell } from "../src/sheet/to-cell";
  * @method Unit-energy codes, rectangular chips, random symbols of all users without end: each symbol meets two of every other user that is not aligned. "matched": P/(N + sum of P_j times both squared partial correlations). "decorrelating", "mmse": inverse of the correlation matrix, a window of 1, 3, 7, 15, ... symbols until the ratio changes by less than 1E-9. "successive": strongest first, perfect cancellation, then matched filter. Carrier phases do not matter.
  * @source S. Verdu, Multiuser Detection (1998), chapters 2, 3, 5, 6, 7.
  * @assumes Single path, perfect knowledge of codes, delays and powers; ratio in both phases of the carrier.
- * @errors #VALUE! for lists that do not match, or more than 160 users or 4096 chips. #N/A, decorrelating: the users whose codes depend on others; they alone.
+ * @errors #VALUE! for lists that do not match, or more than 160 users or 4096 chips. #N/A for single users: decorrelating, where the code depends on others so much that noise rises by more than 50 dB; mmse, where it depends on users more than 100 dB stronger.
  * @example =CAP.RECEIVER.SINR({1,1,1,-1;1,-1,1,1}, {-100;-90}, {0;0.5}, -110) is 3.846
  */
 export function receiverSinr(

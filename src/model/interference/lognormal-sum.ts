@@ -6,6 +6,11 @@ const TAIL = 40;
 /** A normal variable beyond this many deviations has probability 1e-18. */
 const WIDEST = 8.8;
 
+/** Probability that the difference of two normal levels exceeds `x` of its deviations; 0 and 1 where the tail has no digits. */
+export function differenceTail(x: number): number {
+  return upperTail(Math.max(-40, Math.min(40, x)));
+}
+
 /**
  * Probability that the mean of `count` independent lognormals exceeds e^margin times another one, all of median 1:
  * P(ln(S/count) - ln W > margin), ln of each with the same deviation in nepers.
@@ -49,7 +54,7 @@ function exceedanceNearNormal(margin: number, deviation: number, count: number):
     for (let k = 0; k < NODES; k++) {
       if (k !== i) weight *= (deviation / SMALLEST_DEVIATION - k) / (i - k);
     }
-    sum += weight * (i === 0 ? upperTail(x / Math.sqrt(1 + 1 / count)) : exceedance(x * node, node, count));
+    sum += weight * (i === 0 ? differenceTail(x / Math.sqrt(1 + 1 / count)) : exceedance(x * node, node, count));
   }
   return Math.min(1, Math.max(0, sum));
 }

@@ -1,6 +1,5 @@
 import { decibel, domain, requireIn, share } from "../domain";
-import { upperTail } from "../numerics/normal";
-import { exceedance } from "./lognormal-sum";
+import { differenceTail, exceedance } from "./lognormal-sum";
 
 export const shadowing = domain(0, 100, "a deviation from 0 to 100 dB");
 export const interfererCount = domain(1, 1e6, "a whole number from 1 to 1E+6", { whole: true });
@@ -37,6 +36,6 @@ export function outage(
   const marginNeper = (medianDb - requiredDb) * NEPER_PER_DECIBEL;
   const deviation = shadowingDb * Math.sqrt(1 - correlation) * NEPER_PER_DECIBEL;
   if (deviation === 0) return marginNeper < 0 ? 1 : 0;
-  if (interferers === 1) return upperTail(marginNeper / (deviation * Math.SQRT2));
+  if (interferers === 1) return differenceTail(marginNeper / (deviation * Math.SQRT2));
   return exceedance(marginNeper, deviation, interferers);
 }

@@ -294,6 +294,29 @@ describe("what must hold", () => {
     );
   });
 
+  test("powers and delays at the ends of their domains give a number or a reason", () => {
+    const level = fc.constantFrom(-1000, -300, -100, 0, 3, 100, 300, 1000);
+    const late = fc.constantFrom(0, 1e-12, 0.5, 3, 7 - 1e-9, 7, 1e9, -1e9);
+    fc.assert(
+      fc.property(
+        fc.nat(),
+        fc.array(fc.tuple(level, late), { minLength: 1, maxLength: 5 }),
+        level,
+        fc.constantFrom(...RECEIVERS),
+        (seed, users, noise, kind) => {
+          const codes = randomCodes(new SeededRandom(seed), users.length, 7);
+          const powers = users.map(([power]) => power);
+          const delays = users.map(([, delay]) => delay);
+          for (const value of receiver.sinr(codes, powers, delays, noise, kind)) {
+            if (value instanceof NoAnswerError) expect(value.message.length).toBeGreaterThan(40);
+            else expect(Number.isFinite(value)).toBe(true);
+          }
+        },
+      ),
+      { seed: 5 },
+    );
+  });
+
   test("a user far below the noise keeps his digits", () => {
     const codes = [sequence("gold", 7, 0), sequence("gold", 7, 1), sequence("gold", 7, 2)];
     const delays = [0, 2.5, 4];

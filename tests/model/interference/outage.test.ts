@@ -143,9 +143,11 @@ describe("what must hold", () => {
   test("the ends of the domain give a probability", () => {
     for (const median of [-1000, 0, 1000]) {
       for (const s of [1e-6, 1, 100]) {
-        for (const n of [2, 1_000_000]) {
-          const here = outage(median, 0, s, n);
-          expect(here >= 0 && here <= 1).toBe(true);
+        for (const n of [1, 2, 1_000_000]) {
+          for (const correlation of [0, 0.999999, 1 - 2 ** -53]) {
+            const here = outage(median, 0, s, n, correlation);
+            expect(here >= 0 && here <= 1).toBe(true);
+          }
         }
       }
     }
