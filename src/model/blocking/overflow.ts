@@ -1,9 +1,7 @@
 import { domain, requireIn } from "../domain";
 import { NoAnswerError } from "../errors";
-import { legendreTail, isFarBelowMean } from "../numerics/poisson-ratio";
 import { bracketAround, rootIn } from "../numerics/root";
-import { blockingOf, freeChannels } from "./erlang-b-formula";
-import { overflowBelowZero, SMALLEST_TRAFFIC } from "./erlang-b-smooth";
+import { excessOf, lostOf } from "./overflow-moments";
 
 export const offeredTraffic = domain(0, 1e7, "traffic from 0 to 10,000,000 erlang");
 export const groupSize = domain(0, 1e7, "a number of channels from 0 to 10,000,000");
@@ -11,22 +9,12 @@ export const streamMean = domain(1e-6, 1e6, "a mean from 0.000001 to 1,000,000 e
 export const streamVariance = domain(0, 1e9, "a variance above 0, up to 1,000,000,000", { openLow: true });
 /** Peakier streams than this come from no overflow met in practice, and their equivalent groups leave the tested range. */
 const MOST_PEAKED = 1000;
+/** Smoother streams than this, as (m - A*)/A*, are nearly constant, which no Poisson traffic is equivalent to. */
+const MOST_SMOOTH = 1e6;
 
 function check(trafficE: number, channels: number): void {
   requireIn(offeredTraffic, "trafficE", trafficE);
   requireIn(groupSize, "channels", channels);
-}
-
-/** Variance over mean of the overflow, unchecked: Riordan's formula in forms without cancellation. */
-function peakednessOf(trafficE: number, channels: number): number {
-  if (channels === 0 || trafficE === 0) return 1;
-  const free = freeChannels(trafficE, channels);
-  if (isFarBelowMean(channels, trafficE)) {
-    // Far above the group 1 - m + A/(1 + free) loses all but 1; with Legendre's fraction c = N/free it is this.
-    const tail = legendreTail(channels, trafficE);
-    return 1 + (free * (1 + tail - free)) / (1 + free);
-  }
-  return 1 - trafficE * blockingOf(trafficE, channels) + trafficE / (1 + free);
 }
 
 /**
@@ -38,7 +26,7 @@ function peakednessOf(trafficE: number, channels: number): number {
  */
 export function mean(trafficE: number, channels: number): number {
   check(trafficE, channels);
-  return trafficE * blockingOf(trafficE, channels);
+  return trafficE === 0 ? 0 : lostOf(trafficE, channels);
 }
 
 /**
@@ -50,7 +38,7 @@ export function mean(trafficE: number, channels: number): number {
  */
 export function peakedness(trafficE: number, channels: number): number {
   check(trafficE, channels);
-  return peakednessOf(trafficE, channels);
+  return trafficE === 0 ? 1 : 1 + excessOf(trafficE, channels);
 }
 
 /**
@@ -62,20 +50,16 @@ export function peakedness(trafficE: number, channels: number): number {
  */
 export function variance(trafficE: number, channels: number): number {
   check(trafficE, channels);
-  return trafficE * blockingOf(trafficE, channels) * peakednessOf(trafficE, channels);
-}
-
-/** A B for any real number of channels, below 0 too. */
-function lostOf(trafficE: number, channels: number): number {
-  return channels >= 0 ? trafficE * blockingOf(trafficE, channels) : overflowBelowZero(trafficE, -channels);
+  return trafficE === 0 ? 0 : lostOf(trafficE, channels) * (1 + excessOf(trafficE, channels));
 }
 
 /**
  * Equivalent random traffic: the Poisson traffic A* and group N* whose overflow has this mean and variance, solved exactly
  * (not by Rapp's approximation); N* real.
  *
- * Riordan's formula gives N* for a trial A*; the mean decides A* in one bracketed search. Peaky streams have N* above 0,
- * Poisson 0, smooth ones below 0 by the continued Erlang formula (G. Bretschneider 1973).
+ * Riordan's formula gives N* for a trial A*: with D = A* - m, what the group carries, and e = z - 1 it is D + (D - e)/(m + e). The
+ * mean or the peakedness of that group's overflow, whichever moves more, then decides A* in one bracketed search. Peaky streams have
+ * N* above 0, Poisson ones 0, smooth ones below 0 by the continued Erlang formula (G. Bretschneider 1973).
  *
  * @param meanE mean of the stream, erlang
  * @param varianceE variance of the stream
@@ -85,38 +69,45 @@ function lostOf(trafficE: number, channels: number): number {
 export function equivalent(meanE: number, varianceE: number): [trafficE: number, channels: number] {
   requireIn(streamMean, "meanE", meanE);
   requireIn(streamVariance, "varianceE", varianceE);
+  if (varianceE === meanE) return [meanE, 0];
+  const excess = (varianceE - meanE) / meanE;
   const z = varianceE / meanE;
-  if (z === 1) return [meanE, 0];
-  if (meanE + z <= 1 || z > MOST_PEAKED) {
+  if (meanE + excess <= 0 || z > MOST_PEAKED) {
     throw new NoAnswerError(
       z > 1
         ? `A peakedness of ${z} is above the ${MOST_PEAKED} that the method covers.`
         : `No stream of calls with a mean of ${meanE} erlang has a variance as small as ${varianceE}; at least ${meanE * (1 - meanE)} is needed.`,
     );
   }
-  const excess = 1 / (meanE + z - 1);
-  const groupFor = (trafficE: number): number => trafficE - meanE + (trafficE * excess - 1);
-  // Above 0 channels the mean is compared through the free channels, which are few where the mean is large: the same
-  // difference, at the rounding error of the smaller number.
-  const difference = (trafficE: number): number => {
-    const channels = groupFor(trafficE);
-    if (channels < 0) return lostOf(trafficE, channels) - meanE;
-    return freeChannels(trafficE, channels) - (trafficE * excess - 1);
+  // The ratio of D to m for peaky streams, of -D to A* for smooth ones: it runs from 0 up in either case.
+  const carriedFor = (ratio: number): number => (excess > 0 ? meanE * ratio : -meanE * (ratio / (1 + ratio)));
+  const trafficFor = (ratio: number): number => (excess > 0 ? meanE * (1 + ratio) : meanE / (1 + ratio));
+  const groupFor = (carriedE: number): number => carriedE + (carriedE - excess) / (meanE + excess);
+  // Rapp's approximation, and A* = m z, which smooth streams come near to.
+  const guess = excess > 0 ? excess + (3 * z * excess) / meanE : -excess / z;
+  // Along the trial groups the peakedness moves this much against the mean, so that one or the other shows more digits of A*.
+  const leverage = 1 + (meanE + excess) ** 2 / trafficFor(guess);
+  const byMean = meanE * leverage < excess;
+  /** Miss of the trial group, from -1 to 1, so that no trial outweighs the others; it rises with the peakedness. */
+  const miss = (ratio: number): number => {
+    const trafficE = trafficFor(ratio);
+    const channels = groupFor(carriedFor(ratio));
+    if (byMean) {
+      const lostE = lostOf(trafficE, channels);
+      return (meanE - lostE) / (meanE + lostE);
+    }
+    const found = excessOf(trafficE, channels);
+    return (found - excess) / (2 + found + excess);
   };
-  const rapp = varianceE + 3 * z * (z - 1);
-  const guess = z > 1 ? rapp : meanE * z;
-  // A smooth stream is a group below 0, so its traffic lies below the mean; a peaky one lies above it.
-  const bracket =
-    z > 1
-      ? bracketAround(difference, guess, meanE, offeredTraffic.high)
-      : bracketAround(difference, Math.max(guess, SMALLEST_TRAFFIC), SMALLEST_TRAFFIC, meanE);
+  const most = excess > 0 ? offeredTraffic.high / meanE : MOST_SMOOTH;
+  const bracket = bracketAround(miss, guess, 0, most);
   if (!bracket) {
     throw new NoAnswerError(
-      `No equivalent traffic within 0.0001 to 10,000,000 erlang for a mean of ${meanE} and a variance of ${varianceE}.`,
+      `No equivalent traffic within the range of the method for a mean of ${meanE} and a variance of ${varianceE}.`,
     );
   }
-  const trafficE = rootIn(difference, bracket);
-  return [trafficE, groupFor(trafficE)];
+  const ratio = rootIn(miss, bracket);
+  return [trafficFor(ratio), groupFor(carriedFor(ratio))];
 }
 
 /**
