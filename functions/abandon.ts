@@ -10,7 +10,7 @@ import { number, perCell } from "../src/sheet/call";
  * @param holdingTimeS Mean holding time in seconds, above 0 to 1e9.
  * @param patienceS Mean patience in seconds, within a factor of a million of the holding time.
  * @returns Share from 0 to 1 of all calls.
- * @method M/M/N+M: waiting call number j leaves at rate 1/patience, so states above N hold the terms y^j / ((x+1) ... (x+j)) with x = N patience/h and y = A patience/h; the share is (h/patience) E[waiting] / A. Summed as positive terms below the servers, by the incomplete gamma function above them.
+ * @method M/M/N+M: waiting call number j leaves at rate 1/patience, so states above N hold the terms y^j / ((x+1) ... (x+j)) with x = N patience/h and y = A patience/h; the share is (h/patience) E[waiting] / A. The sums come from the incomplete gamma function by region (series, uniform expansion, continued fraction), in a bounded time at any size.
  * @source C. Palm, Research on telephone traffic carried by full availability groups, Tele 1957.
  * @assumes Poisson arrivals, exponential holding times and exponential patience, first come first served, no return.
  * @example =CAP.ABANDON.LOST(12, 10, 100, 60) is 0.2278

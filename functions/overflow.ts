@@ -65,7 +65,7 @@ export function overflowPeakedness(trafficE: any[][], channels: any[][]): any[][
  * @method Both moments are met exactly (Riordan's formula and the continuous Erlang B), not by Rapp's approximation. A smooth stream (variance below mean) gets a group below 0 by the continued Erlang formula 1/B = A times the integral of exp(-A y)(1+y)^N.
  * @source R. I. Wilkinson, Bell System Technical Journal 35 (1956); G. Bretschneider, Extension of the Equivalent Random Method to Smooth Traffics, ITC 7 (1973).
  * @assumes The stream is described by two moments alone; independent streams add in mean and in variance.
- * @errors #N/A where no stream of whole calls has so small a variance, or the equivalent lies outside 0.0001 to 1e7 erlang.
+ * @errors #N/A where no stream of whole calls has so small a variance, or the equivalent lies beyond 1e7 erlang.
  * @example =CAP.OVERFLOW.EQUIVALENT(10, 20) is 25.4846
  */
 export function overflowEquivalent(meanE: any[][], varianceE: any[][], labels?: any[][]): any[][] {
