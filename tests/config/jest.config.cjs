@@ -4,6 +4,7 @@ module.exports = {
   testMatch: ["<rootDir>/tests/**/*.test.ts"],
   testEnvironment: "node",
   transform: {
+    "\\.csv$": "<rootDir>/tests/config/text-transform.cjs",
     "\\.ts$": [
       "ts-jest",
       {

@@ -1,6 +1,6 @@
 import type { Book } from "../engine/library";
 import { HEADING_ROW } from "./input-sheet";
-import { locked, printed, putHeading, putNote, putTitle } from "./look";
+import { fitHeight, locked, printed, putHeading, putNote, putTitle } from "./look";
 import { SHEETS } from "./sheet-names";
 
 interface Check {
@@ -55,17 +55,19 @@ const CHECKS: readonly Check[] = [
   { what: "No error in the traffic", found: `SUMPRODUCT(--ISERROR(${traffic}!A5:F5))`, expected: "0", within: 0 },
 ];
 
+const WIDTHS = [84, 18, 18, 14, 10];
+
 export async function addChecks(book: Book): Promise<void> {
   const sheet = book.addWorksheet(SHEETS.checks, { views: [{ state: "frozen", ySplit: HEADING_ROW }] } as never);
   putTitle(sheet, "Checks", "Sums that must agree. A row that says CHECK needs a look before the plan is used.");
-  const widths = [84, 18, 18, 14, 10];
-  widths.forEach((width, i) => (sheet.getColumn(i + 1).width = width));
+  WIDTHS.forEach((width, i) => (sheet.getColumn(i + 1).width = width));
   ["check", "found", "expected", "may differ by", "verdict"].forEach((name, i) =>
     putHeading(sheet.getCell(HEADING_ROW, i + 1), name),
   );
   CHECKS.forEach(({ what, found, expected, within }, i) => {
     const row = HEADING_ROW + 1 + i;
     putNote(sheet.getCell(row, 1), what);
+    fitHeight(sheet, row, what, WIDTHS[0]!);
     sheet.getCell(row, 2).value = { formula: found } as never;
     sheet.getCell(row, 3).value = { formula: expected } as never;
     sheet.getCell(row, 4).value = within;

@@ -58,6 +58,6 @@ export async function addDashboard(book: Book, years: number): Promise<void> {
     options("Blocking, weighted by traffic", [series(COLUMN.blocking, "share of calls lost")]),
     "A42:H59",
   );
-  printed(sheet, 1);
+  printed(sheet, 1, 1);
   await locked(sheet);
 }

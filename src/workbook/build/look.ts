@@ -51,13 +51,21 @@ export function putNote(cell: Cell, text: string, bold = false): void {
   cell.alignment = { wrapText: true, vertical: "top" };
 }
 
+const LINE_HEIGHT = 15;
+
+/** Height of a row whose text wraps: programs disagree on when to fit it by themselves. */
+export function fitHeight(sheet: Sheet, row: number, text: string, width: number): void {
+  const lines = text.split("\n").reduce((sum, part) => sum + Math.max(1, Math.ceil((part.length * 1.08) / width)), 0);
+  sheet.getRow(row).height = Math.min(400, Math.max(LINE_HEIGHT, lines * LINE_HEIGHT));
+}
+
 /** Printing: landscape, one page wide, the headings on every page. */
-export function printed(sheet: Sheet, headingRow: number): void {
+export function printed(sheet: Sheet, headingRow: number, pagesHigh = 0): void {
   Object.assign(sheet.pageSetup, {
     orientation: "landscape",
     fitToPage: true,
     fitToWidth: 1,
-    fitToHeight: 0,
+    fitToHeight: pagesHigh,
     paperSize: 9,
     printTitlesRow: `${headingRow}:${headingRow}`,
   });

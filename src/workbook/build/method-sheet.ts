@@ -1,7 +1,9 @@
 import type { Book } from "../engine/library";
+import { compose } from "../../sheet/method-text";
+import { textOf } from "../../sheet/registry";
 import type { FunctionTable } from "../function-table";
 import { HEADING_ROW } from "./input-sheet";
-import { locked, printed, putHeading, putTitle } from "./look";
+import { fitHeight, locked, printed, putHeading, putTitle } from "./look";
 import { putSpill } from "./result-sheet";
 import { SHEETS } from "./sheet-names";
 
@@ -22,6 +24,8 @@ const STATED = [
   ...["SHADOWING.MARGIN", "RANGE.HATA", "TIMING.RADIUS", "CELL.AREA"],
 ];
 
+const TEXT_WIDTH = 130;
+
 export async function addMethod(book: Book, functions: FunctionTable): Promise<void> {
   const sheet = book.addWorksheet(SHEETS.method, { views: [{ state: "frozen", ySplit: HEADING_ROW }] } as never);
   putTitle(
@@ -29,14 +33,16 @@ export async function addMethod(book: Book, functions: FunctionTable): Promise<v
     "Method",
     "How each number is counted: formula, source and assumptions, as the functions themselves state them.",
   );
-  sheet.getColumn(1).width = 24;
-  sheet.getColumn(2).width = 130;
+  sheet.getColumn(1).width = 28;
+  sheet.getColumn(2).width = TEXT_WIDTH;
   putHeading(sheet.getCell(HEADING_ROW, 1), "function");
   putHeading(sheet.getCell(HEADING_ROW, 2), "method statement");
   const stated = STATED.filter((id) => functions[id]);
   stated.forEach((id, i) => {
     const row = HEADING_ROW + 1 + i;
     sheet.getCell(row, 1).value = `CAP.${id}`;
+    const text = textOf(id);
+    if (text) fitHeight(sheet, row, compose(text), TEXT_WIDTH);
     for (const column of [1, 2]) sheet.getCell(row, column).alignment = { wrapText: true, vertical: "top" };
   });
   const first = HEADING_ROW + 1;

@@ -146,7 +146,8 @@ async function addChanges(book: Book): Promise<void> {
   putTitle(sheet, "Changes", "Filled when a new forecast is loaded: only what moved, with both values.");
   CHANGES_HEADINGS.forEach((name, c) => {
     putHeading(sheet.getCell(5, c + 1), name);
-    sheet.getColumn(c + 1).width = c === 3 ? 20 : 16;
+    sheet.getColumn(c + 1).width = name === "column" || name === "scheme" ? 22 : 14;
+    if (["before", "after", "change"].includes(name)) sheet.getColumn(c + 1).numFmt = "#,##0.0000";
   });
   printed(sheet, 5);
   await locked(sheet);

@@ -1,7 +1,9 @@
 import type { Book } from "../engine/library";
-import { locked, printed, putNote, putTitle, WARN, FONT } from "./look";
+import { fitHeight, locked, printed, putNote, putTitle, WARN, FONT } from "./look";
 import type { Origin } from "./plan-workbook";
 import { SHEETS } from "./sheet-names";
+
+const TEXT_WIDTH = 96;
 
 const STEPS: readonly (readonly [string, string])[] = [
   [SHEETS.forecast, "Users of each area, year by year. Start here; replace it whenever the forecast moves."],
@@ -27,7 +29,7 @@ const CAUTIONS: readonly string[] = [
 export async function addPurpose(book: Book, origin: Origin): Promise<void> {
   const sheet = book.addWorksheet(SHEETS.purpose);
   sheet.getColumn(1).width = 24;
-  sheet.getColumn(2).width = 96;
+  sheet.getColumn(2).width = TEXT_WIDTH;
   putTitle(
     sheet,
     "Radio capacity plan",
@@ -37,6 +39,7 @@ export async function addPurpose(book: Book, origin: Origin): Promise<void> {
   const add = (left: string, right: string, bold = false): void => {
     putNote(sheet.getCell(row, 1), left, true);
     putNote(sheet.getCell(row, 2), right, bold);
+    fitHeight(sheet, row, right, TEXT_WIDTH);
     row++;
   };
   if (origin.invented) {

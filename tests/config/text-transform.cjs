@@ -1,0 +1,2 @@
+/** Text files as modules, as the bundler takes them. */
+module.exports = { process: (text) => ({ code: `module.exports = ${JSON.stringify(text)};` }) };
