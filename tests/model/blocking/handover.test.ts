@@ -1,6 +1,7 @@
 import fc from "fast-check";
 import * as erlangB from "../../../src/model/blocking/erlang-b";
 import * as handover from "../../../src/model/blocking/handover";
+import * as multiservice from "../../../src/model/blocking/multiservice";
 import { DomainError, NoAnswerError } from "../../../src/model/errors";
 import { published, publishedValue, title, type Published } from "../../checks/published";
 import reference from "../../fixtures/blocking/handover.json";
@@ -91,6 +92,19 @@ describe("identities", () => {
         expect(blocked).toBe(1);
         expect(relativeError(failed, alone)).toBeLessThan(TIGHT);
         expect(relativeError(handover.blocking(0, handoverE, n, n >> 1)[1], alone)).toBeLessThan(TIGHT);
+      }),
+      options,
+    );
+  });
+
+  test("guard channels are a reservation between two services of one width", () => {
+    fc.assert(
+      fc.property(traffic, traffic, channels, fc.nat(), (newE, handoverE, n, seed) => {
+        const guard = seed % (n + 1);
+        const services = multiservice.blocking(n, [newE, handoverE], [1, 1], [guard, 0]);
+        handover.blocking(newE, handoverE, n, guard).forEach((probability, i) => {
+          if (probability > 1e-290) expect(relativeError(services[i]!, probability)).toBeLessThan(TIGHT * 5);
+        });
       }),
       options,
     );
