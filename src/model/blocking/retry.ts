@@ -6,7 +6,8 @@ import { blockingOf, carriedOf, freeChannels } from "./erlang-b-formula";
 export const firstTraffic = domain(0, 1e6, "traffic from 0 to 1,000,000 erlang");
 export const retryChannels = domain(0, 1e7, "a number of channels from 0 to 10,000,000");
 
-const MOST_OFFERED = 1e12;
+/** Even a share one rounding unit below 1 settles below this. */
+const MOST_OFFERED = 1e25;
 
 /**
  * Offered traffic with repeated attempts: every blocked call is tried again with the retry share, so that
