@@ -15,7 +15,7 @@ import {
   rawRange,
   wholeTable,
 } from "../src/sheet/call";
-import { changeCells, demandCells, planCells, summaryCells } from "../src/sheet/plan-tables";
+import { changeCells, demandCells, expansionCells, planCells, summaryCells } from "../src/sheet/plan-tables";
 
 /**
  * Smallest number of carriers that carries a traffic at a blocking target.
@@ -151,6 +151,22 @@ export function planTable(
  */
 export function planSummary(plan: any[][], by?: any[][]): any[][] {
   return wholeTable(summaryCells, { plan: rawRange(plan), by: optionalChoice(by, GROUPINGS, "year") });
+}
+
+/**
+ * Cheapest steps of a ladder that keep every cell within its targets, with dates and costs.
+ * @customfunction PLAN.EXPANSION
+ * @param plan Table Plan with its headings, as CAP.PLAN.TABLE gives it.
+ * @param ladder Table Ladder with its headings: step, fromScheme, carriersAdded, cost, leadTimeMonths and others.
+ * @returns Table with headings: cell, step, orderBy, inServiceBy (year-month), cost. Cells that need nothing have no row.
+ * @method Exact dynamic programming over how often each step is taken, year by year: cost once, plus costPerYear to the end of the plan, undiscounted; a step is in service from January and ordered leadTimeMonths earlier, and never undone. Carriers add to what is installed; sectors and sites divide the load evenly, each part needing at least its share and the channels that keep its calls at the blocking of the undivided cell (Erlang B); sites shrink the reach needed by the root of their number; toScheme moves all users, the target's need growing with its users. A step that requires another comes with or after it.
+ * @source R. Bellman, Dynamic Programming, 1957; Erlang B; planning rules: common practice.
+ * @assumes Needs between years do not interpolate; spectrum of needsSpectrumMHz must be licensed, which the function does not know. Masts and radiated power: local regulation governs.
+ * @errors #VALUE! names table, row and column of the first wrong cell. A cell that no steps can help has a row that says what is missing and when.
+ * @example =CAP.PLAN.EXPANSION({"cell","year","scheme","carriersRequired","carriersInstalled";"Q1",2027,"FDMA",3,2}, {"step","fromScheme","carriersAdded","cost","leadTimeMonths";"add carrier","FDMA",1,100,6}) is "cell"
+ */
+export function planExpansion(plan: any[][], ladder: any[][]): any[][] {
+  return wholeTable(expansionCells, { plan: rawRange(plan), ladder: rawRange(ladder) });
 }
 
 /**

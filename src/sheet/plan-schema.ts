@@ -97,6 +97,9 @@ export const PLAN = {
   upMbps: optional(nonNegative, 0),
   carriersRequired: optional(nonNegative, 0),
   carriersInstalled: optional(nonNegative, 0),
+  channelsRequired: optional(nonNegative, 0),
+  radiusKm: optional(nonNegative),
+  radiusNeededKm: optional(nonNegative, 0),
   blocking: optional(share),
 } satisfies Schema;
 

@@ -1,6 +1,8 @@
 /** From the cells of a plan's tables to the model's rows and back. */
 import { changesBetween, ROUNDING, type ComparedPlan } from "../model/plan/changes";
 import { demandTable } from "../model/plan/demand";
+import { expansion, type LadderStep } from "../model/plan/expansion";
+import type { NeedRow } from "../model/plan/expansion-needs";
 import type {
   CellRow,
   DemandRow,
@@ -11,7 +13,7 @@ import type {
   ServiceKind,
   ServiceRow,
 } from "../model/plan/records";
-import { summarise, type Grouping } from "../model/plan/summary";
+import { summarise, type Grouping, type SummedRow } from "../model/plan/summary";
 import { planTable } from "../model/plan/table";
 import { isBlank } from "./argument";
 import { CellError, wrongInput } from "./cell-error";
@@ -248,10 +250,7 @@ export function summaryCells(planCells: Cells, by: Grouping): unknown[][] {
   const capacityMet = flagAt(planCells, plan, "capacityMet");
   const coverageMet = flagAt(planCells, plan, "coverageMet");
   const key = by === "year" ? plan.numbers("year") : plan.texts(by);
-  const rows = rowsOf<Omit<Parameters<typeof summarise>[0] extends Iterable<infer R> ? R : never, never>>(
-    plan,
-    schema.PLAN,
-  );
+  const rows = rowsOf<SummedRow>(plan, schema.PLAN);
   const summary = summarise(
     rows.map((row, i) => ({ ...row, key: key[i]!, capacityMet: capacityMet(i), coverageMet: coverageMet(i) })),
   );
@@ -284,6 +283,21 @@ export function summaryCells(planCells: Cells, by: Grouping): unknown[][] {
       row.carriersInstalled,
       Number.isNaN(row.blocking) ? "" : row.blocking,
     ]),
+  );
+}
+
+/** PLAN.EXPANSION on cells. */
+export function expansionCells(planCells: Cells, ladderCells: Cells): unknown[][] {
+  const plan = readWhole(planCells, "Plan", schema.PLAN);
+  const coverageMet = flagAt(planCells, plan, "coverageMet");
+  const rows = rowsOf<Omit<NeedRow, "coverageMet">>(plan, schema.PLAN);
+  const steps = expansion(
+    rows.map((row, i) => ({ ...row, coverageMet: coverageMet(i) })),
+    readRows<LadderStep>(ladderCells, "Ladder", schema.LADDER),
+  );
+  return labelled(
+    ["cell", "step", "orderBy", "inServiceBy", "cost"],
+    steps.map((row) => [row.cell, row.step, row.orderBy, row.inServiceBy, row.cost]),
   );
 }
 

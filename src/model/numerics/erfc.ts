@@ -23,12 +23,17 @@ export function scaledErfc(x: number): number {
   return (t * next - afterNext + SCALED_ERFC[0]!) / (1 + 2 * x);
 }
 
+/** Beyond it even exp(-x^2 / 2) is below the smallest double. */
+const FARTHEST = 40;
+
 /**
  * exp(-scale x^2) without the rounding of x^2, which alone would cost x^2 rounding units.
  *
  * @param scale 1 or 1/2, so that the product with the short leading part of x is exact
  */
 export function gaussian(x: number, scale: 1 | 0.5): number {
+  // Far out the answer is 0, and 0 times a correction that overflows would be NaN.
+  if (Math.abs(x) > FARTHEST) return 0;
   const lead = Math.fround(x);
   return Math.exp(-scale * lead * lead) * Math.exp(-scale * (x - lead) * (x + lead));
 }
