@@ -5,6 +5,16 @@ import { join } from "node:path";
 import { deflateSync } from "node:zlib";
 
 const SIZES = [16, 32, 64, 80];
+
+/**
+ * How an icon is drawn: its size, how much of the square the drawing fills, and a single colour instead of its own.
+ * @typedef {{ size: number, fill?: number, outline?: readonly number[] }} IconShape
+ */
+
+/** The two icons inside the package of the unified manifest: full colour with a margin, and a white outline. */
+export const PACKAGE_ICON = { size: 192, fill: 0.7 };
+export const OUTLINE_ICON = { size: 32, outline: [255, 255, 255] };
+
 const OUTLINE = [24, 60, 92];
 const LOADED = [222, 120, 31];
 const CALM = [117, 172, 178];
@@ -25,18 +35,24 @@ function hexagon(/** @type {number} */ dx, /** @type {number} */ dy) {
   return Math.max(...sides) / inner;
 }
 
-/** Colour and cover of one point. */
-function sample(/** @type {number} */ x, /** @type {number} */ y) {
+/**
+ * Colour of one point, or undefined where nothing is drawn.
+ * @param {number} x
+ * @param {number} y
+ * @param {readonly number[] | undefined} outline
+ */
+function sample(x, y, outline) {
   for (const cell of CELLS) {
     const edge = hexagon(x - cell.x, y - cell.y);
-    if (edge <= 0.82) return cell.colour;
-    if (edge <= 1) return OUTLINE;
+    if (edge <= 0.82) return outline ? undefined : cell.colour;
+    if (edge <= 1) return outline ?? OUTLINE;
   }
   return undefined;
 }
 
-/** @param {number} size */
-function draw(size) {
+/** @param {IconShape} shape */
+export function drawIcon({ size, fill = 1, outline }) {
+  const place = (/** @type {number} */ at) => (at / size - 0.5) / fill + 0.5;
   const rows = [];
   for (let y = 0; y < size; y++) {
     const row = [0];
@@ -45,8 +61,9 @@ function draw(size) {
       let hits = 0;
       for (let k = 0; k < SAMPLES * SAMPLES; k++) {
         const colour = sample(
-          (x + ((k % SAMPLES) + 0.5) / SAMPLES) / size,
-          (y + (Math.floor(k / SAMPLES) + 0.5) / SAMPLES) / size,
+          place(x + ((k % SAMPLES) + 0.5) / SAMPLES),
+          place(y + (Math.floor(k / SAMPLES) + 0.5) / SAMPLES),
+          outline,
         );
         if (!colour) continue;
         hits++;
@@ -102,5 +119,5 @@ function png(size, pixels) {
 /** @param {string} folder */
 export function writeIcons(folder) {
   mkdirSync(folder, { recursive: true });
-  for (const size of SIZES) writeFileSync(join(folder, `icon-${size}.png`), draw(size));
+  for (const size of SIZES) writeFileSync(join(folder, `icon-${size}.png`), drawIcon({ size }));
 }

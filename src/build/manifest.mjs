@@ -1,75 +1,89 @@
 // @ts-check
-/** Fills the manifest templates for one environment and address. */
-import { mkdirSync, readFileSync, writeFileSync } from "node:fs";
+/** `npm run manifest`: both manifests, the pages and the icons for one address and environment. */
+import { existsSync, mkdirSync, readFileSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
 import { parseArgs } from "node:util";
 import { fileURLToPath } from "node:url";
-import { writeIcons } from "./icons.mjs";
+import { zipSync } from "fflate";
+import { escapeJson, fill } from "./fill.mjs";
+import { drawIcon, OUTLINE_ICON, PACKAGE_ICON, writeIcons } from "./icons.mjs";
+import { writePages } from "./pages.mjs";
+import { numericVersion, settingsOf } from "./settings.mjs";
 
-/** Each environment has its own id and namespace, so that a development copy never shadows the real functions. */
-const ENVIRONMENTS = {
-  production: { id: "5b0c9a52-7b3e-4d0b-9a55-3f4f6d1c8e21", namespace: "CAP", suffix: "" },
-  development: { id: "e1f7a3c4-92d8-4c17-8b36-0d5a7c2f9b64", namespace: "CAPDEV", suffix: " (development)" },
-};
-
-const LOCAL_URL = "https://localhost:3000";
-
-/** @param {string} text */
-function escapeXml(text) {
-  return text.replace(
-    /[&<>"]/g,
-    (letter) => ({ "&": "&amp;", "<": "&lt;", ">": "&gt;", '"': "&quot;" })[letter] ?? letter,
-  );
+/**
+ * @param {import("./settings.mjs").Settings} settings
+ * @param {string} version of package.json
+ * @returns {Record<string, string>}
+ */
+function manifestValues(settings, version) {
+  const { id, namespace, suffix, longSuffix, url, origin } = settings;
+  return {
+    id,
+    namespace,
+    version: numericVersion(version),
+    provider: "Radio capacity functions project",
+    developer: "Radio capacity functions",
+    shortName: `Radio capacity functions${suffix}`,
+    groupLabel: `Radio capacity${suffix}`,
+    displayName: `Radio capacity functions${longSuffix}`,
+    description: "Worksheet functions that dimension the capacity of multi-user radio networks.",
+    url,
+    origin,
+    domain: new URL(url).host,
+  };
 }
 
 /**
- * @param {string} template
- * @param {Record<string, string>} values
+ * The unified manifest with its icons, as the programs that take it want it.
+ * @param {string} manifest
  */
-export function fill(template, values) {
-  return template.replace(/\{\{(\w+)\}\}/g, (_, name) => {
-    const value = values[name];
-    if (value === undefined) throw new Error(`The manifest template asks for ${name}, which has no value.`);
-    return escapeXml(value);
+function addInPackage(manifest) {
+  return zipSync({
+    "manifest.json": new TextEncoder().encode(manifest),
+    "color.png": drawIcon(PACKAGE_ICON),
+    "outline.png": drawIcon(OUTLINE_ICON),
   });
 }
 
 /**
  * @param {string} root folder of the project
  * @param {string} version of package.json
- * @param {{ url?: string, environment?: string }} [options]
+ * @param {import("./settings.mjs").Choices} [choices]
+ * @returns {string[]} what was written
  */
-export function writeManifest(root, version, { url = LOCAL_URL, environment = "development" } = {}) {
-  if (!(environment in ENVIRONMENTS)) {
-    throw new Error(`environment is "${environment}"; allowed: ${Object.keys(ENVIRONMENTS).join(", ")}.`);
-  }
-  const address = new URL(url);
-  if (address.protocol !== "https:" || address.search || address.hash) {
-    throw new Error(`url is "${url}"; allowed: an https address without query, as the host demands.`);
-  }
-  const { id, namespace, suffix } = ENVIRONMENTS[/** @type {keyof typeof ENVIRONMENTS} */ (environment)];
-  const template = readFileSync(join(root, "manifest-template", "manifest.xml"), "utf8");
-  const xml = fill(template, {
-    id,
-    namespace,
-    version: `${version}.0`,
-    provider: "Radio capacity functions project",
-    displayName: `Radio capacity functions${suffix}`,
-    description: "Worksheet functions that dimension the capacity of multi-user radio networks.",
-    url: address.href.replace(/\/$/, ""),
+export function writeManifest(root, version, choices = {}) {
+  const settings = settingsOf(choices);
+  const values = manifestValues(settings, version);
+  const templates = join(root, "manifest-template");
+  const dist = join(root, "dist");
+  mkdirSync(dist, { recursive: true });
+  writeFileSync(join(dist, "manifest.xml"), fill(readFileSync(join(templates, "manifest.xml"), "utf8"), values));
+  const unified = fill(readFileSync(join(templates, "manifest.json"), "utf8"), values, escapeJson);
+  writeFileSync(join(dist, "manifest.json"), unified);
+  writeFileSync(join(dist, "addin-package.zip"), addInPackage(unified));
+  writeIcons(join(dist, "icons"));
+  writePages(root, version, settings);
+  return ["manifest.xml", "manifest.json", "addin-package.zip", "icons/", "pane.html", "help.html"];
+}
+
+function main() {
+  const { values } = parseArgs({
+    options: { url: { type: "string" }, environment: { type: "string" }, "office-js": { type: "string" } },
   });
-  mkdirSync(join(root, "dist"), { recursive: true });
-  writeFileSync(join(root, "dist", "manifest.xml"), xml);
-  writeIcons(join(root, "dist", "icons"));
+  const root = join(fileURLToPath(import.meta.url), "../../..");
+  if (!existsSync(join(root, "dist", "functions.json"))) throw new Error("dist/ is empty; run npm run build first.");
+  const { version } = JSON.parse(readFileSync(join(root, "package.json"), "utf8"));
+  const written = writeManifest(root, version, {
+    url: values.url,
+    environment: values.environment,
+    officeJs: values["office-js"],
+  });
+  console.log(`Wrote to dist/: ${written.join(", ")}.`);
 }
 
 if (process.argv[1] === fileURLToPath(import.meta.url)) {
-  const { values } = parseArgs({ options: { url: { type: "string" }, environment: { type: "string" } } });
-  const root = join(fileURLToPath(import.meta.url), "../../..");
-  const { version } = JSON.parse(readFileSync(join(root, "package.json"), "utf8"));
   try {
-    writeManifest(root, version, values);
-    console.log("Wrote dist/manifest.xml and dist/icons.");
+    main();
   } catch (fault) {
     console.error(fault instanceof Error ? fault.message : fault);
     process.exitCode = 1;
