@@ -141,7 +141,7 @@ function changeLines(changes: readonly (readonly unknown[])[]): string[] {
   const rows = changes.slice(1);
   if (rows.length === 0) return ["nothing moved."];
   const counts = new Map<string, number>();
-  for (const row of rows) counts.set(String(row[3] as string), (counts.get(String(row[3] as string)) ?? 0) + 1);
+  for (const row of rows) counts.set(String(row[3]), (counts.get(String(row[3])) ?? 0) + 1);
   const moved = [...counts].sort((a, b) => b[1] - a[1]).map(([column, count]) => `${column} ${count}`);
   const verdicts = rows.filter((row) => row[3] === "limitedBy" || row[3] === "row");
   const lines = [`${rows.length} values moved: ${moved.join(", ")}.`];

@@ -126,7 +126,7 @@ export async function run(argv: readonly string[], around: Surroundings): Promis
       for (const line of helpOn(entry)) around.out(line);
       return EXIT.success;
     }
-    await entry.run({ words: positionals, options: values as commands.Call["options"] }, around);
+    await entry.run({ words: positionals, options: values }, around);
     return EXIT.success;
   } catch (fault) {
     if (fault instanceof WorkbookFailure || fault instanceof CellError) {

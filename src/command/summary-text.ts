@@ -4,7 +4,7 @@ type Row = readonly unknown[];
 
 function shown(value: unknown): string {
   if (value === null || value === undefined) return "";
-  if (typeof value !== "number") return String(value as string | boolean);
+  if (typeof value !== "number") return String(value);
   if (Number.isInteger(value)) return value.toLocaleString("en-US", { useGrouping: Math.abs(value) >= 10_000 });
   return Math.abs(value) >= 1000 ? value.toFixed(0) : String(Number(value.toPrecision(4)));
 }
@@ -80,7 +80,7 @@ function firstShort(plan: readonly Row[]): string[] {
     const first = Math.min(...short.map((row) => row[at("year")] as number));
     const counts = new Map<string, number>();
     for (const row of short) {
-      const reason = String(row[at("limitedBy")] as string);
+      const reason = String(row[at("limitedBy")]);
       counts.set(reason, (counts.get(reason) ?? 0) + 1);
     }
     const [reason] = [...counts].sort((a, b) => b[1] - a[1])[0]!;

@@ -18,6 +18,8 @@ export default tseslint.config(
       "@typescript-eslint/no-unused-vars": ["error", { argsIgnorePattern: "^_", varsIgnorePattern: "^_" }],
       "@typescript-eslint/restrict-template-expressions": ["error", { allowNumber: true }],
       "@typescript-eslint/only-throw-error": ["error", { allow: [{ from: "file", name: "CellError" }] }],
+      // Cells and thrown values are of unknown type; turning them into text is meant.
+      "@typescript-eslint/no-base-to-string": "off",
       eqeqeq: "error",
       "no-console": "error",
     },

@@ -25,7 +25,7 @@ const tables = {
 };
 type Inputs = typeof tables;
 
-const call = (id: string, ...args: (Table | unknown)[]): Table =>
+const call = (id: string, ...args: unknown[]): Table =>
   functionTable[id]!.call(args.map((argument) => (Array.isArray(argument) ? (argument as Table) : [[argument]])));
 const one = (id: string, ...args: unknown[]): number => {
   const answer = call(id, ...args)[0]![0];

@@ -15,7 +15,7 @@ async function sample(): Promise<Uint8Array> {
   sheet.getCell("B1").value = {
     formula: toStored("=CAP.ERLANGB.CHANNELS(A1,0.01)", functionTable),
     result: 1,
-  } as never;
+  };
   book.addWorksheet("Notes").getCell("A1").value = "the planner's own & <kept>";
   return writeBook(book);
 }

@@ -29,6 +29,7 @@ const FARTHEST = 40;
 /**
  * exp(-scale x^2) without the rounding of x^2, which alone would cost x^2 rounding units.
  *
+ * @param x any number
  * @param scale 1 or 1/2, so that the product with the short leading part of x is exact
  */
 export function gaussian(x: number, scale: 1 | 0.5): number {

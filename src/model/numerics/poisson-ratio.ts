@@ -151,6 +151,8 @@ export interface SumsAbove {
  * By balance weighted = mean - (n - mean) total, which loses digits only far below n. There a continued fraction of Kummer's
  * M(1, n + 1, mean) = 1 + total (DLMF section 13.5) gives both: 1 + total = n / (n - mean + mean/g), weighted = mean (1 + total)/g.
  *
+ * @param n the term
+ * @param mean of the distribution
  * @param distance n - mean, where the caller knows it better than the difference of the two rounded numbers
  */
 export function sumsAbove(n: number, mean: number, distance: number = n - mean): SumsAbove {

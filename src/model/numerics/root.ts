@@ -16,7 +16,8 @@ export interface Bracket {
  * R. P. Brent, "Algorithms for Minimization without Derivatives" (1973), chapter 4: inverse quadratic and secant steps, held by bisection.
  *
  * @param f continuous on [low, high]
- * @param low, high ends with values of opposite sign (or 0)
+ * @param low end with a value of one sign (or 0)
+ * @param high end with a value of the opposite sign (or 0)
  * @throws RangeError where the signs agree: callers bracket first
  */
 export function root(f: (x: number) => number, low: number, high: number): number {
@@ -87,7 +88,8 @@ export function rootIn(f: (x: number) => number, bracket: Bracket): number {
  *
  * @param f continuous for x above 0
  * @param guess where to start, above 0
- * @param lowest, highest ends of the domain: the search stays within them
+ * @param lowest lower end of the domain: the search stays within it
+ * @param highest upper end of the domain
  * @returns the bracket, or undefined where the domain holds no change of sign between its ends
  */
 export function bracketAround(

@@ -22,6 +22,7 @@ export interface OfferedLoad {
   dataService: ServiceRow | undefined;
 }
 
+/** A cell without any load. */
 export function emptyLoad(): OfferedLoad {
   return { lost: [], waiting: [], downMbps: 0, upMbps: 0, targetMbps: 0, dataService: undefined };
 }

@@ -68,12 +68,12 @@ export async function addChecks(book: Book): Promise<void> {
     const row = HEADING_ROW + 1 + i;
     putNote(sheet.getCell(row, 1), what);
     fitHeight(sheet, row, what, WIDTHS[0]!);
-    sheet.getCell(row, 2).value = { formula: found } as never;
-    sheet.getCell(row, 3).value = { formula: expected } as never;
+    sheet.getCell(row, 2).value = { formula: found };
+    sheet.getCell(row, 3).value = { formula: expected };
     sheet.getCell(row, 4).value = within;
     sheet.getCell(row, 5).value = {
       formula: `IF(ABS(B${row}-C${row})<=D${row}*MAX(ABS(B${row}),ABS(C${row})),"agrees","CHECK")`,
-    } as never;
+    };
     sheet.getCell(row, 2).numFmt = "#,##0.000";
     sheet.getCell(row, 3).numFmt = "#,##0.000";
     sheet.getCell(row, 4).numFmt = "0.0E+00";

@@ -17,7 +17,7 @@ const COLUMN = {
 } as const;
 
 export async function addDashboard(book: Book, years: number): Promise<void> {
-  const sheet = book.addWorksheet(SHEETS.dashboard, { views: [{ showGridLines: false }] } as never);
+  const sheet = book.addWorksheet(SHEETS.dashboard, { views: [{ showGridLines: false }] });
   putTitle(sheet, "Dashboard", "The plan by year, drawn from the sheet Summary.");
   const first = HEADING_ROW + 1;
   const last = HEADING_ROW + years;

@@ -80,5 +80,5 @@ export async function locked(sheet: Sheet): Promise<void> {
     sort: true,
     autoFilter: true,
     insertRows: true,
-  } as never);
+  });
 }

@@ -8,19 +8,10 @@ import { addDashboard } from "./dashboard-sheet";
 import { addInputSheet, type InputTable } from "./input-sheet";
 import { locked, printed, putHeading, putTitle } from "./look";
 import { addMethod } from "./method-sheet";
+import type { Origin } from "./origin";
 import { addPurpose } from "./purpose-sheet";
 import { addResultSheet } from "./result-sheet";
 import { CHANGES_HEADINGS, SHEETS } from "./sheet-names";
-
-/** What made a workbook, kept in its properties. */
-export interface Origin {
-  readonly version: string;
-  readonly time: Date;
-  /** SHA-256 of each input by its name. */
-  readonly hashes: Readonly<Record<string, string>>;
-  /** True for the demo scenario, which says on every opening that it is invented. */
-  readonly invented: boolean;
-}
 
 const PLAN_HEADINGS = [
   ...["cell", "site", "area", "year", "scheme", "callTrafficE", "waitingTrafficE", "downMbps", "upMbps"],

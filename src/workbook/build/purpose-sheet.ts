@@ -1,6 +1,6 @@
 import type { Book } from "../engine/library";
 import { fitHeight, locked, printed, putNote, putTitle, WARN, FONT } from "./look";
-import type { Origin } from "./plan-workbook";
+import type { Origin } from "./origin";
 import { SHEETS } from "./sheet-names";
 
 const TEXT_WIDTH = 96;

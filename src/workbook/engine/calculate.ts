@@ -217,7 +217,7 @@ function clear(formulas: readonly Formula[]): void {
   const anchors = new Set(formulas.map(({ sheet, row, column }) => `${sheet.name}!${keyOf(row, column)}`));
   for (const formula of formulas) {
     const { sheet, cell, row, column, rows, columns } = formula;
-    cell.result = undefined as never;
+    cell.result = undefined;
     if (!formula.dynamic) continue;
     for (let r = row; r < row + rows; r++) {
       for (let c = column; c < column + columns; c++) {

@@ -33,7 +33,7 @@ describe("50-digit values of the defining integral", () => {
   const cases = Object.keys(regimes).flatMap((regime) => quantities.map((quantity) => [regime, ...quantity] as const));
 
   test.each(cases)("%s: %s", (regime, _name, quantity, column) => {
-    const rows = regimes[regime as keyof typeof regimes] as number[][];
+    const rows = regimes[regime as keyof typeof regimes];
     expect(rows.length).toBeGreaterThan(15);
     for (const row of rows) {
       const actual = quantity(row[0]!, row[1]!);

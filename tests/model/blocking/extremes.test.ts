@@ -50,8 +50,8 @@ describe("overflow of groups of any size", () => {
 
 describe("equivalent groups of peaky, light, smooth and nearly Poisson streams", () => {
   check(reference.equivalent, 3, [
-    ["traffic", (m, v) => overflow.equivalent(m!, v!)[0], 3],
-    ["channels", (m, v) => overflow.equivalent(m!, v!)[1], 4],
+    ["traffic", (m, v) => overflow.equivalent(m, v)[0], 3],
+    ["channels", (m, v) => overflow.equivalent(m, v)[1], 4],
     ["lost", model(overflow.lost), 5],
   ]);
 });

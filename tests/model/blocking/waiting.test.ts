@@ -24,13 +24,13 @@ const digitsOf = (row: Row): string => row.find((cell): cell is string => typeof
 
 describe("against 50 digits", () => {
   const cases: [string, Row[], (...args: number[]) => number][] = [
-    ["erlangC.delayed", rows.delayed, erlangC.delayed as (...args: number[]) => number],
-    ["erlangC.wait", rows.wait, erlangC.wait as (...args: number[]) => number],
-    ["erlangC.late", rows.late, erlangC.late as (...args: number[]) => number],
-    ["queue.lost", rows.queueLost, queue.lost as (...args: number[]) => number],
-    ["queue.delayed", rows.queueDelayed, queue.delayed as (...args: number[]) => number],
-    ["abandon.lost", rows.abandon, abandon.lost as (...args: number[]) => number],
-    ["retry.offered", rows.retry, retry.offered as (...args: number[]) => number],
+    ["erlangC.delayed", rows.delayed, erlangC.delayed],
+    ["erlangC.wait", rows.wait, erlangC.wait],
+    ["erlangC.late", rows.late, erlangC.late],
+    ["queue.lost", rows.queueLost, queue.lost],
+    ["queue.delayed", rows.queueDelayed, queue.delayed],
+    ["abandon.lost", rows.abandon, abandon.lost],
+    ["retry.offered", rows.retry, retry.offered],
   ];
   test.each(cases.flatMap(([name, list, fn]) => list.map((row) => [name, numbers(row).join(", "), fn, row] as const)))(
     "%s(%s)",

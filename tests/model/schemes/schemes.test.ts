@@ -32,7 +32,7 @@ describe("published values", () => {
     (i) =>
       i["sectors"]! * cdma.pole(i["W_Hz"]! / MEGA, i["R_bps"]! / KILO, decibels(i["EbN0_linear"]!), i["activity"]!, 0),
   );
-  checkPublished("CD-32", (i) => 1 / (cdma.pole(1, 1, 0, 1, 0, i["sigma_dB"]!) / cdma.pole(1, 1, 0, 1, 0)));
+  checkPublished("CD-32", (i) => 1 / (cdma.pole(1, 1, 0, 1, 0, i["sigma_dB"]) / cdma.pole(1, 1, 0, 1, 0)));
   for (const id of ["CD-61s", "CD-63s", "CD-64s", "CD-65s"]) {
     checkPublished(id, (i) => cdma.softTraffic(i["N_channels_real"]!, i["i_other"]!, i["B"]!));
   }
@@ -41,7 +41,7 @@ describe("published values", () => {
   }
   // The published power has no common channels: -300 dBm is none.
   checkPublished("CD-50", (i) => {
-    const floor = noise.floor(i["W_cps"]! / MEGA, i["NF_dB"]!, i["T_K"]!);
+    const floor = noise.floor(i["W_cps"]! / MEGA, i["NF_dB"]!, i["T_K"]);
     const args = [[i["EbN0_dB"]!], [i["R_bps"]! / KILO], [i["activity"]!], [i["N_users"]!]] as const;
     const orthogonality = i["alpha_orthogonality"]!;
     const dbm = cdma.downlinkPower(
