@@ -45,6 +45,9 @@ const FAILURES: Readonly<Record<number, string>> = {
 
 const CALL_REQUEST = { type: 3, category: 1, messageType: 1000 };
 
+/** A call that takes longer would show as busy for ever. */
+const LONGEST_WAIT_MS = 3000;
+
 type Settle = (result: { value?: unknown; failed?: boolean; code?: number }) => void;
 
 export class StandIn {
@@ -67,6 +70,24 @@ export class StandIn {
       clearTimeout,
       setInterval,
       clearInterval,
+      // The little of a page that the runtime looks at while it starts.
+      navigator: { userAgent: "stand-in" },
+      location: { hash: "", search: "", protocol: "https:", href: "https://localhost/" },
+      document: {
+        getElementsByTagName: () => [
+          {
+            src: "https://localhost/custom-functions-runtime.js",
+            getAttribute: () => null,
+            appendChild: () => undefined,
+          },
+        ],
+        createElement: () => ({ setAttribute: () => undefined }),
+      },
+      history: {},
+      external: {},
+      addEventListener: () => undefined,
+      Sys: { StringBuilder: () => undefined },
+      Type: Object.assign(() => undefined, { registerNamespace: () => undefined, registerClass: () => undefined }),
     };
     scope["window"] = scope;
     scope["self"] = scope;
@@ -117,7 +138,13 @@ export class StandIn {
     }
     const passed = entry.parameters.map((parameter, i) => this.passed(parameter, args[i]));
     const invocation = this.nextId++;
-    const settled = new Promise<Parameters<Settle>[0]>((resolve) => this.pending.set(invocation, resolve));
+    const settled = new Promise<Parameters<Settle>[0]>((resolve) => {
+      const late = setTimeout(() => resolve({ failed: true, value: `${id} never answers` }), LONGEST_WAIT_MS);
+      this.pending.set(invocation, (result) => {
+        clearTimeout(late);
+        resolve(result);
+      });
+    });
     // The bridge is text: NaN and infinities become null on the way, as in the host.
     const request = JSON.stringify([invocation, id, passed, null, 0]);
     const { type, category, messageType } = CALL_REQUEST;
