@@ -8,6 +8,7 @@ import {
   userCount,
 } from "../src/model/interference/domains";
 import * as cdma from "../src/model/schemes/cdma";
+import { outage, outageTraffic } from "../src/model/schemes/cdma-outage";
 import { trafficPerUser } from "../src/model/schemes/subscribers";
 import { number, optionalNumber, parallel, perCell } from "../src/sheet/call";
 
@@ -235,5 +236,45 @@ export function cdmaDownlinkpower(
     noiseFloorDbm: number(noiseFloorDbm, cdma.powerLevel),
     meanLossDb: number(meanLossDb, cdma.lossLevel),
     commonDbm: number(commonDbm, cdma.powerLevel),
+  });
+}
+
+/**
+ * Probability that the load of the code-division uplink exceeds its limit; it is not call blocking.
+ * @customfunction CDMA.OUTAGE
+ * @param trafficE Offered traffic of the cell in erlang, 0 to 1,000,000.
+ * @param chipRateMcps Chip rate in Mchip/s, above 0.
+ * @param bitRateKbps Bit rate in kbit/s, above 0.
+ * @param ebN0Db Required Eb/N0 in dB.
+ * @param activity Share of time that a user sends, above 0 to 1.
+ * @param otherCellRatio Other-cell interference over own-cell power, at least 0.
+ * @param [loadLimit] Load not to exceed, above 0 and below 1; 0.75 by default.
+ * @param [powerControlErrorDb] Standard deviation of received powers in dB, 0 to 20; 0 by default.
+ * @returns Probability from 0 to 1.
+ * @method P(N L > limit) for a Poisson number N of active users of mean v A (1 + i) and the load L = 1/(1+(W/R)/(Eb/N0)) of one: v thins the number, not L. Other cells add to mean and variance alike, by i. Exact Poisson tail without power-control error. With it each load is times a lognormal of median 1; the transform exp(-m (1 - phi)) of the sum is inverted numerically, absolute error below 1e-9 (1e-7 below 0.09 dB), and 0 stands for less than 1e-12.
+ * @source A. M. Viterbi, A. J. Viterbi, Erlang Capacity of a Power Controlled CDMA System, IEEE J. Select. Areas Commun. 11 (1993). J. Abate, W. Whitt, The Fourier-Series Method for Inverting Transforms, Queueing Systems 10 (1992).
+ * @assumes Calls are admitted without limit; power-control errors of users are independent; other-cell interference as that of i times the cell's own users.
+ * @errors #VALUE! with a power-control error where v A (1 + i) is above 1,000,000.
+ * @example =CAP.CDMA.OUTAGE(60, 3.84, 12.2, 5, 0.67, 0.55) is 0.0508
+ */
+export function cdmaOutage(
+  trafficE: any[][],
+  chipRateMcps: any[][],
+  bitRateKbps: any[][],
+  ebN0Db: any[][],
+  activity: any[][],
+  otherCellRatio: any[][],
+  loadLimit?: any[][],
+  powerControlErrorDb?: any[][],
+): any[][] {
+  return perCell(outage, {
+    trafficE: number(trafficE, outageTraffic),
+    chipRateMcps: number(chipRateMcps, chipRate),
+    bitRateKbps: number(bitRateKbps, bitRate),
+    ebN0Db: number(ebN0Db, ebN0),
+    activity: number(activity, cdma.activityFactor),
+    otherCellRatio: number(otherCellRatio, otherCellRatios),
+    loadLimit: optionalNumber(loadLimit, cdma.loadLimitShare, 0.75),
+    powerControlErrorDb: optionalNumber(powerControlErrorDb, cdma.powerControlError, 0),
   });
 }
