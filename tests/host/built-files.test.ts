@@ -8,32 +8,44 @@ const hosts: [string, StandIn][] = [
   ["web, empty cell null", web],
 ];
 
+// The host gathers calls for half a second, so that calls in one go cost that once.
 test("every function of functions.json is associated, once", async () => {
-  expect(metadata.functions.length).toBeGreaterThan(0);
+  expect(metadata.functions.length).toBeGreaterThan(100);
   expect(desktop.warnings).toEqual([]);
-  for (const { id, parameters } of metadata.functions) {
-    const blank = parameters.filter((parameter) => !parameter.optional).map(() => [[null]]);
-    const [[cell]] = (await desktop.call(id, blank)) as [[unknown]];
-    expect(cell).toBeDefined();
+  const answers = await Promise.all(
+    metadata.functions.map(({ id, parameters }) =>
+      desktop.call(
+        id,
+        parameters.filter(({ optional }) => !optional).map(() => [[null]]),
+      ),
+    ),
+  );
+  answers.forEach(([[cell]]: any, i) => {
+    expect({ id: metadata.functions[i]!.id, cell }).toEqual({ id: metadata.functions[i]!.id, cell: expect.anything() });
     expect((cell as HostError).error).not.toBe("#NAME?");
-  }
+  });
 });
 
 test("no function answers wrong text with a number", async () => {
-  for (const { id, parameters } of metadata.functions) {
-    if (parameters.length === 0) continue;
-    const out = await web.call(
-      id,
-      parameters.map(() => [["§ not an input §"]]),
-    );
+  const taking = metadata.functions.filter(({ parameters }) => parameters.length > 0);
+  const answers = await Promise.all(
+    taking.map(({ id, parameters }) =>
+      web.call(
+        id,
+        parameters.map(() => [["§ not an input §"]]),
+      ),
+    ),
+  );
+  answers.forEach((out, i) => {
     const first = out[0]![0] as HostError;
+    const { id } = taking[i]!;
     expect({ id, error: first.error, told: (first.message ?? "").length > 0 }).toEqual({
       id,
       error: "#VALUE!",
       told: true,
     });
     expect(first.message).not.toContain("Internal fault");
-  }
+  });
 });
 
 describe.each(hosts)("%s", (_, host) => {
