@@ -12,6 +12,9 @@ const optional = (allowed: ReturnType<typeof domain>, fallback?: number): Column
 const text: Column = { kind: "text" };
 const optionalText: Column = { kind: "text", optional: true };
 
+/** An Eb/N0 of exactly 0 dB is taken for an empty cell, which some hosts pass as 0. */
+const requiredEbN0: Column = { kind: "number", domain: decibel, optional: true, zeroIsBlank: true };
+
 export const DEMAND = {
   area: text,
   year: required(year),
@@ -36,8 +39,8 @@ export const SERVICES = {
   messageBytes: optional(nonNegative, 0),
   downKbps: optional(positive),
   upKbps: optional(positive),
-  ebN0Db: optional(decibel),
-  downlinkEbN0Db: optional(decibel),
+  ebN0Db: requiredEbN0,
+  downlinkEbN0Db: requiredEbN0,
   targetBlocking: optional(probability),
   targetWaitS: optional(nonNegative),
   targetWaitShare: optional(probability),
@@ -101,52 +104,67 @@ export const PLAN = {
   radiusKm: optional(nonNegative),
   radiusNeededKm: optional(nonNegative, 0),
   blocking: optional(share),
+  maximumCarriers: optional(positive),
 } satisfies Schema;
 
-/** Parameters of the radio table that are numbers, and those that are texts; a row of another name is a misspelling. */
-export const RADIO_NUMBERS: readonly string[] = [
-  "bandwidthMHz",
-  "channelSpacingKHz",
-  "slotsPerCarrier",
-  "blocks",
-  "blockBandwidthKHz",
-  "chipRateMcps",
-  "bitRateKbps",
-  "controlChannels",
-  "clusterSize",
-  "sectors",
-  "guardKHz",
-  "overheadShare",
-  "downlinkTimeShare",
-  "spectralEfficiency",
-  "uplinkSpectralEfficiency",
-  "pathLossExponent",
-  "load",
+const whole = domain(1, 100_000, "a whole number from 1 to 100,000", { whole: true });
+const belowOne = domain(0, 1, "a share from 0 to below 1", { openHigh: true });
+const insideOne = domain(0, 1, "a share above 0 and below 1", { openLow: true, openHigh: true });
+
+/** Parameters of the radio table that are numbers; a row of another name is the planner's own, or a misspelling. */
+export const RADIO_NUMBERS: Readonly<Record<string, ReturnType<typeof domain>>> = {
+  bandwidthMHz: positive,
+  channelSpacingKHz: positive,
+  slotsPerCarrier: whole,
+  blocks: positive,
+  blockBandwidthKHz: positive,
+  chipRateMcps: positive,
+  bitRateKbps: positive,
+  controlChannels: count,
+  clusterSize: whole,
+  sectors: domain(1, 6, "1, 2, 3 or 6 sectors", { whole: true }),
+  guardKHz: nonNegative,
+  overheadShare: belowOne,
+  downlinkTimeShare: insideOne,
+  spectralEfficiency: positive,
+  uplinkSpectralEfficiency: positive,
+  pathLossExponent: positive,
+  load: share,
+  edgeSnrDb: decibel,
+  attenuation: positive,
+  minimumDb: decibel,
+  maximumBpsHz: positive,
+  otherCellRatio: nonNegative,
+  orthogonality: share,
+  loadLimit: insideOne,
+  efficiency: share,
+  powerControlErrorDb: nonNegative,
+  frequencyMHz: positive,
+  baseHeightM: positive,
+  mobileHeightM: positive,
+  referenceLossDb: positive,
+  eirpDbm: decibel,
+  uplinkEirpDbm: decibel,
+  noiseFigureDb: nonNegative,
+  mobileNoiseFigureDb: nonNegative,
+  gainsDb: decibel,
+  lossesDb: decibel,
+  shadowingDb: nonNegative,
+  areaProbability: probability,
+  requiredSinrDb: decibel,
+  guardTimeUs: nonNegative,
+  advanceSteps: nonNegative,
+  stepUs: nonNegative,
+  maximumCarriers: whole,
+};
+
+/** Parameters of which 0 is rarely meant though it is allowed: an empty cell passed as 0 must not count. */
+export const RADIO_ZERO_IS_BLANK: ReadonlySet<string> = new Set([
   "edgeSnrDb",
-  "attenuation",
-  "minimumDb",
-  "maximumBpsHz",
-  "otherCellRatio",
-  "orthogonality",
-  "loadLimit",
-  "efficiency",
-  "powerControlErrorDb",
-  "frequencyMHz",
-  "baseHeightM",
-  "mobileHeightM",
-  "referenceLossDb",
   "eirpDbm",
   "uplinkEirpDbm",
-  "noiseFigureDb",
-  "mobileNoiseFigureDb",
-  "gainsDb",
-  "lossesDb",
-  "shadowingDb",
-  "areaProbability",
-  "requiredSinrDb",
   "guardTimeUs",
-  "advanceSteps",
-  "stepUs",
-  "maximumCarriers",
-];
+  "mobileNoiseFigureDb",
+]);
+
 export const RADIO_TEXTS: readonly string[] = ["access", "pathLossModel", "environment", "sight"];

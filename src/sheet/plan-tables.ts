@@ -15,6 +15,8 @@ import type {
 } from "../model/plan/records";
 import { summarise, type Grouping, type SummedRow } from "../model/plan/summary";
 import { planTable } from "../model/plan/table";
+import { contains } from "../model/domain";
+import { DomainError } from "../model/errors";
 import { isBlank } from "./argument";
 import { CellError, wrongInput } from "./cell-error";
 import * as schema from "./plan-schema";
@@ -85,11 +87,14 @@ function readServices(cells: Cells): ServiceRow[] {
       if (!table.present.has(column))
         throw wrongInput(`Services lacks the column ${column}, which a ${row.kind} needs.`);
     }
-    if (!Number.isNaN(row.targetWaitS) && Number.isNaN(row.targetWaitShare)) {
+    if (row.targetWaitS > 0 && Number.isNaN(row.targetWaitShare)) {
       throw wrongInput(`Services row ${table.rowNumbers[i]}, column targetWaitShare: missing beside targetWaitS.`);
     }
-    if (row.kind === "message" && Number.isNaN(row.targetWaitS)) {
-      throw wrongInput(`Services row ${table.rowNumbers[i]}, column targetWaitS: missing; a message waits.`);
+    if (row.kind === "message" && Number.isNaN(row.targetWaitShare)) {
+      throw wrongInput(`Services row ${table.rowNumbers[i]}, column targetWaitShare: missing; a message waits.`);
+    }
+    if (!Number.isNaN(row.targetWaitShare) && Number.isNaN(row.targetWaitS)) {
+      throw wrongInput(`Services row ${table.rowNumbers[i]}, column targetWaitS: missing beside targetWaitShare.`);
     }
   });
   return rows;
@@ -101,7 +106,7 @@ function readRadio(cells: Cells): Map<string, RadioColumn> {
   if (!heading || String(heading[0]).trim().toLowerCase() !== "parameter") {
     throw wrongInput('Radio must begin with a heading row: "parameter", then a column for each scheme.');
   }
-  const known = [...schema.RADIO_NUMBERS, ...schema.RADIO_TEXTS];
+  const known = [...Object.keys(schema.RADIO_NUMBERS), ...schema.RADIO_TEXTS];
   const byLower = new Map(known.map((name) => [name.toLowerCase(), name]));
   const schemes = heading.map((name) => (isBlank(name) || name === 0 ? "" : String(name).trim()));
   const radio = new Map<string, Map<string, number | string>>();
@@ -123,50 +128,23 @@ function readRadio(cells: Cells): Map<string, RadioColumn> {
     schemes.forEach((scheme, c) => {
       const cell = row[c];
       if (c === 0 || scheme === "" || isBlank(cell)) return;
-      const where = `Radio row ${r + 2}, column ${scheme}: ${parameter}`;
       if (cell instanceof CellError) throw cell;
       if (schema.RADIO_TEXTS.includes(parameter)) {
         // An empty cell that arrives as 0 is no text.
         if (cell !== 0) radio.get(scheme)!.set(parameter, String(cell).trim());
-      } else if (typeof cell !== "number" || !Number.isFinite(cell)) {
-        throw wrongInput(
-          `${where} is ${typeof cell === "string" ? `the text "${cell.slice(0, 40)}"` : String(cell)}; allowed: a number.`,
-        );
-      } else if (cell !== 0 || !MEANINGLESS_AT_ZERO.has(parameter)) radio.get(scheme)!.set(parameter, cell);
+        return;
+      }
+      const allowed = schema.RADIO_NUMBERS[parameter]!;
+      if (cell === 0 && (!contains(allowed, 0) || schema.RADIO_ZERO_IS_BLANK.has(parameter))) return;
+      if (typeof cell !== "number" || !contains(allowed, cell)) {
+        const where = `Radio row ${r + 2}, column ${scheme}: ${parameter}`;
+        throw wrongInput(new DomainError(where, cell, allowed.words).message);
+      }
+      radio.get(scheme)!.set(parameter, cell);
     });
   });
   return radio;
 }
-
-/** Parameters of which a 0 can only be an empty cell; for the others an empty cell and 0 should be told apart by the planner. */
-const MEANINGLESS_AT_ZERO: ReadonlySet<string> = new Set([
-  "bandwidthMHz",
-  "channelSpacingKHz",
-  "slotsPerCarrier",
-  "blocks",
-  "blockBandwidthKHz",
-  "chipRateMcps",
-  "bitRateKbps",
-  "clusterSize",
-  "sectors",
-  "spectralEfficiency",
-  "uplinkSpectralEfficiency",
-  "pathLossExponent",
-  "attenuation",
-  "maximumBpsHz",
-  "loadLimit",
-  "frequencyMHz",
-  "baseHeightM",
-  "mobileHeightM",
-  "referenceLossDb",
-  "eirpDbm",
-  "uplinkEirpDbm",
-  "areaProbability",
-  "downlinkTimeShare",
-  "edgeSnrDb",
-  "guardTimeUs",
-  "maximumCarriers",
-]);
 
 /** PLAN.DEMAND on cells. */
 export function demandCells(demand: Cells, services: Cells): unknown[][] {
@@ -205,6 +183,7 @@ const PLAN_COLUMNS: readonly (keyof PlanRow)[] = [
   "limitedBy",
   "spareShare",
   "users",
+  "maximumCarriers",
 ];
 
 /** PLAN.TABLE on cells. */

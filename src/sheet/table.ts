@@ -5,7 +5,14 @@ import { closest } from "./spelling";
 
 /** What one column of a labelled table holds. */
 export type Column =
-  | { readonly kind: "number"; readonly domain: Domain; readonly optional?: boolean; readonly fallback?: number }
+  | {
+      readonly kind: "number";
+      readonly domain: Domain;
+      readonly optional?: boolean;
+      readonly fallback?: number;
+      /** True where 0 is rarely meant, so that an empty cell passed as 0 must not count as 0. */
+      readonly zeroIsBlank?: boolean;
+    }
   | { readonly kind: "text"; readonly optional?: boolean; readonly fallback?: string }
   | {
       readonly kind: "choice";
@@ -140,10 +147,10 @@ function readNumbers(
   values: Float64Array,
   problems: Problem[],
 ): void {
-  const zeroIsMissing = !contains(column.domain, 0);
+  const zeroIsMissing = column.zeroIsBlank === true || !contains(column.domain, 0);
   rowNumbers.forEach((row, i) => {
     const cell = cells[row - 1]![at];
-    if (typeof cell === "number" && contains(column.domain, cell)) values[i] = cell;
+    if (typeof cell === "number" && contains(column.domain, cell) && !(cell === 0 && zeroIsMissing)) values[i] = cell;
     else if (isBlank(cell) || (cell === 0 && zeroIsMissing)) {
       if (!column.optional) problems.push({ row, column: name, message: `missing; allowed: ${allowedWords(column)}.` });
     } else {

@@ -108,8 +108,8 @@ describe("blind recalculation by single functions", () => {
       messageS,
     );
     expect(relativeError(row["waitingTrafficE"], groupE + messageE)).toBeLessThan(1e-12);
-    const arrivals = groupE / group["holdingTimeS"] + messageE / messageS;
-    const holding = (groupE + messageE) / arrivals;
+    // An arrival waits for the calls that it finds, the long ones in proportion to their time.
+    const holding = (groupE * group["holdingTimeS"] + messageE * messageS) / (groupE + messageE);
     const waiting = Math.max(
       one("ERLANGC.CHANNELS", groupE + messageE, holding, group["targetWaitS"], 1 - group["targetWaitShare"]),
       one("ERLANGC.CHANNELS", groupE + messageE, holding, message["targetWaitS"], 1 - message["targetWaitShare"]),
@@ -442,6 +442,23 @@ describe("expansion", () => {
   const steps = (...rows: unknown[][]): unknown[][] => call("PLAN.EXPANSION", [heading, ...rows], ladder).slice(1);
   test("a cell that lacks nothing has no row", () => {
     expect(steps(["Q", 2027, "F", 2, 2])).toEqual([]);
+  });
+  test("carriers beyond the licensed spectrum count only from steps that bring their own", () => {
+    const limited: Table = [
+      [...heading, "maximumCarriers"],
+      ["Q", 2027, "F", 4, 2, 2],
+    ];
+    expect(call("PLAN.EXPANSION", limited, ladder)[1]![1]).not.toBe("carrier");
+    const licensed = ladder.map((row, i) => [...row, i === 0 ? "needsSpectrumMHz" : 5]);
+    expect(
+      call("PLAN.EXPANSION", limited, licensed)
+        .slice(1)
+        .map((row) => row[1]),
+    ).toEqual(["carrier", "carrier"]);
+  });
+  test("a year that nothing can mend does not leave the other years without steps", () => {
+    const found = steps(["Q", 2027, "F", 99, 2], ["Q", 2028, "F", 3, 2]);
+    expect(found.map((row) => row[1])).toEqual(["carrier", "no step suffices: F lacks 97 carriers in 2027"]);
   });
   test("a step comes as late as it may, ordered by its lead time, and pays its yearly cost to the end", () => {
     expect(steps(["Q", 2027, "F", 2, 2], ["Q", 2028, "F", 3, 2], ["Q", 2029, "F", 3, 2])).toEqual([

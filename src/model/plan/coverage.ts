@@ -227,7 +227,7 @@ export class Coverage {
     let radiusKm: number | undefined = this.timingKm;
     let by: Reach["by"] = "timing range";
     let interferenceMarginDb = 0;
-    let judged = false;
+    let judged = this.timingKm !== Infinity;
     for (const { by: direction, at, eirp, noiseFigure } of directions) {
       if (eirp === undefined) continue;
       const wanted = receiver(scheme, load, at);

@@ -8,6 +8,9 @@ export interface NeedRow {
   readonly scheme: string;
   readonly users: number;
   readonly callTrafficE: number;
+  readonly waitingTrafficE: number;
+  /** Carriers that the spectrum allows; NaN where nothing limits them. */
+  readonly maximumCarriers: number;
   readonly channelsRequired: number;
   readonly carriersRequired: number;
   readonly carriersInstalled: number;
@@ -18,19 +21,21 @@ export interface NeedRow {
 
 /**
  * Carriers that each part needs when a cell's load is divided evenly: at least the even share, and enough channels for the
- * divided calls at the blocking that the undivided group had (a smaller group needs more than its share).
+ * divided calls at the blocking that the undivided group had (a smaller group needs more than its share). An estimate from the
+ * plan's own columns; the divided cell is to be recomputed as a cell of its own before it is ordered.
  *
  * @param row the undivided cell
  * @param parts sectors or sites that share the load, 1 or more
  */
 export function dividedCarriers(row: NeedRow, parts: number): number {
-  const { callTrafficE, channelsRequired, carriersRequired } = row;
+  const { channelsRequired, carriersRequired } = row;
+  const trafficE = row.callTrafficE + row.waitingTrafficE;
   if (parts <= 1 || carriersRequired === 0) return carriersRequired;
   const even = Math.ceil(carriersRequired / parts);
-  if (callTrafficE === 0 || channelsRequired === 0) return even;
-  const blocking = erlangB.blocking(callTrafficE, channelsRequired);
+  if (trafficE === 0 || channelsRequired === 0) return even;
+  const blocking = erlangB.blocking(trafficE, channelsRequired);
   if (!(blocking > 1e-12 && blocking < 1)) return even;
-  const channels = erlangB.channels(callTrafficE / parts, blocking);
+  const channels = erlangB.channels(trafficE / parts, blocking);
   return Math.min(carriersRequired, Math.max(even, Math.ceil((channels * carriersRequired) / channelsRequired)));
 }
 

@@ -16,6 +16,8 @@ export interface LadderStep {
   readonly carriersAdded: number;
   readonly sectorsAdded: number;
   readonly sitesAdded: number;
+  /** Spectrum that the step brings with it, MHz of one direction. */
+  readonly needsSpectrumMHz: number;
   readonly requires: string;
   /** NaN for as often as it helps. */
   readonly maxTimes: number;
@@ -37,6 +39,8 @@ export interface ExpansionRow {
 const MOST_TIMES = 20;
 const MOST_STATES = 200_000;
 const MONTHS_PER_YEAR = 12;
+/** Weighs a year with an unmet target above any cost, so that as few as possible remain and then the cheapest way counts. */
+const UNMET = 1e15;
 
 /** How often each step may be taken, as digits of a mixed-radix number: one number is one state. */
 interface States {
@@ -99,7 +103,19 @@ function missing(states: States, state: number, rows: readonly NeedRow[]): strin
     const sites = sum(row.scheme, "sitesAdded");
     const parts = 1 + sum(row.scheme, "sectorsAdded") + sites;
     const needed = dividedCarriers({ ...row, carriersRequired: carriers }, parts);
-    const short = needed - row.carriersInstalled - sum(row.scheme, "carriersAdded");
+    // What is licensed holds only so many carriers; steps that bring spectrum of their own go beyond.
+    const added = sum(row.scheme, "carriersAdded");
+    const withSpectrum = states.steps.reduce(
+      (total, step, i) =>
+        step.fromScheme === row.scheme && step.needsSpectrumMHz > 0
+          ? total + step.carriersAdded * times(states, state, i)
+          : total,
+      0,
+    );
+    const licensed = Number.isNaN(row.maximumCarriers)
+      ? Infinity
+      : Math.max(row.maximumCarriers, row.carriersInstalled);
+    const short = needed - Math.min(row.carriersInstalled + added - withSpectrum, licensed) - withSpectrum;
     if (short > 0) return `${row.scheme} lacks ${short} carriers in ${row.year}`;
     if (!coveredWith(row, sites)) return `${row.scheme} lacks reach in ${row.year}`;
   }
@@ -187,7 +203,7 @@ interface Taken {
 
 interface Way {
   readonly taken: readonly Taken[];
-  /** Why the way ends before the plan does. */
+  /** What is missing in the first year that no way can mend. */
   readonly reason: string | undefined;
 }
 
@@ -205,7 +221,6 @@ function cheapestWay(cell: string, group: Group, plan: readonly (readonly NeedRo
   /** Step by which a state was reached in a year, -1 where it was carried over. */
   const arrivals: Int16Array[] = [];
   const years: number[] = [];
-  let reason: string | undefined;
   for (const rows of byYear) {
     const year = rows[0]!.year;
     const next = Float64Array.from(cost);
@@ -221,34 +236,38 @@ function cheapestWay(cell: string, group: Group, plan: readonly (readonly NeedRo
         }
       }
     }
-    let possible = false;
     for (let state = 0; state < states.count; state++) {
       if (next[state] === Infinity) continue;
-      if (!allowed[state] || missing(states, state, rows) !== undefined) next[state] = Infinity;
-      else possible = true;
-    }
-    if (!possible) {
-      reason = missing(states, states.count - 1, rows) ?? missing(states, 0, rows);
-      break;
+      if (!allowed[state]) next[state] = Infinity;
+      else if (missing(states, state, rows) !== undefined) next[state]! += UNMET;
     }
     arrivals.push(arrival);
     years.push(year);
     cost = next;
   }
-  return { taken: trace(states, cost, arrivals, years), reason };
+  return trace(states, cost, arrivals, years, byYear);
 }
 
-/** The steps that led to the cheapest state, first year first. */
-function trace(states: States, cost: Float64Array, arrivals: readonly Int16Array[], years: readonly number[]): Taken[] {
+/** The steps that led to the cheapest state, first year first, and what they leave unmet. */
+function trace(
+  states: States,
+  cost: Float64Array,
+  arrivals: readonly Int16Array[],
+  years: readonly number[],
+  byYear: readonly (readonly NeedRow[])[],
+): Way {
   let state = cost.reduce((best, value, i) => (value < cost[best]! ? i : best), 0);
   const taken: Taken[] = [];
+  let reason: string | undefined;
   for (let y = arrivals.length - 1; y >= 0; y--) {
+    // Going backwards, the last reason found is that of the first year.
+    reason = missing(states, state, byYear[y]!) ?? reason;
     for (let by = arrivals[y]![state]!; by >= 0; by = arrivals[y]![state]!) {
       taken.push({ step: states.steps[by]!, year: years[y]! });
       state -= states.weight[by]!;
     }
   }
-  return taken.reverse();
+  return { taken: taken.reverse(), reason };
 }
 
 /** The cheapest ways of all groups of a cell, first year first. */

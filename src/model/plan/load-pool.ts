@@ -18,6 +18,8 @@ import type { Scheme } from "./scheme";
 
 const KBPS_PER_MBPS = 1000;
 const MOST_USERS = 100_000;
+/** A cell with data alone is counted in hundredths of a carrier. */
+const DATA_UNITS = 100;
 
 /** Load that one user of a service puts on one carrier, per direction. */
 interface Loads {
@@ -102,6 +104,13 @@ export class LoadPool implements Capacity {
     }
     this.limit = scheme.number("loadLimit", 0.75);
     this.downLimit = this.limit - scheme.number("overheadShare", 0.2);
+    if (this.downLimit <= 0) {
+      throw new DomainError(
+        `Radio overheadShare of ${scheme.name}`,
+        scheme.number("overheadShare", 0.2),
+        `less than loadLimit, ${this.limit}`,
+      );
+    }
     this.otherCellRatio = scheme.required("otherCellRatio");
     const calls = load.lost.map(({ service }) => loadsOf(service, scheme));
     const lightest = calls.length > 0 ? Math.min(...calls.map(({ up }) => up)) : this.limit;
@@ -131,11 +140,25 @@ export class LoadPool implements Capacity {
       (this.callLoad.up + this.dataLoad.up) / this.limit,
       (this.callLoad.down + this.dataLoad.down) / this.downLimit,
     );
-    return Math.ceil(Math.max(byLoad, this.channelsRequired / this.usersPerCarrier));
+    const byCalls = this.soft.length === 0 ? this.dataCarriers() : this.channelsRequired / this.usersPerCarrier;
+    return Math.ceil(Math.max(byLoad, byCalls));
   }
 
-  /** Users of the lightest call at the planned load. */
+  /** Carriers, not whole, that data alone would fill, with room for a transfer at its promised rate. */
+  private dataCarriers(): number {
+    if (!this.dataMbps) return 0;
+    const { targetMbps } = this.load;
+    const room = (direction: keyof Loads, offered: number): number =>
+      offered > 0 ? targetMbps / this.dataMbps![direction] : 0;
+    return Math.max(
+      (this.dataLoad.up + room("up", this.load.upMbps)) / this.limit,
+      (this.dataLoad.down + room("down", this.load.downMbps)) / this.downLimit,
+    );
+  }
+
+  /** Users of the lightest call at the planned load; hundredths of a carrier where there are no calls. */
   channels(carriers: number): number {
+    if (this.soft.length === 0) return carriers * DATA_UNITS;
     return Math.floor(carriers * this.usersPerCarrier);
   }
 
@@ -155,7 +178,7 @@ export class LoadPool implements Capacity {
   }
 
   private required(): number {
-    if (this.soft.length === 0) return 0;
+    if (this.soft.length === 0) return Math.ceil(DATA_UNITS * this.dataCarriers() - 1e-9);
     const meets = (users: number): boolean => this.blocking(users).every((value, i) => value <= this.targets[i]!);
     const mean = this.load.lost.reduce((sum, { trafficE }, i) => sum + trafficE * this.widths[i]!, 0);
     const most = Math.floor(MOST_USERS / (1 + this.otherCellRatio));

@@ -45,7 +45,7 @@ export function addLoad(
   if (service.kind === "call" || service.kind === "group call") {
     const trafficE = demand.trafficE * share;
     if (trafficE === 0) return;
-    if (!Number.isNaN(service.targetWaitS)) load.waiting.push({ service, trafficE });
+    if (!Number.isNaN(service.targetWaitShare)) load.waiting.push({ service, trafficE });
     else if (!Number.isNaN(service.targetBlocking)) load.lost.push({ service, trafficE });
     else
       throw new DomainError(

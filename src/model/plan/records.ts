@@ -108,6 +108,8 @@ export interface PlanRow {
   readonly capacityMet: boolean;
   readonly limitedBy: Limit;
   readonly spareShare: number | undefined;
+  /** Carriers that the spectrum allows in the cell; undefined where nothing limits them. */
+  readonly maximumCarriers: number | undefined;
   /** Users of the cell that this row's share of the services stands for; they add up over the schemes. */
   readonly users: number;
 }

@@ -123,6 +123,14 @@ function checkShares(cells: readonly CellRow[]): void {
   }
 }
 
+function checkInstalled({ cells, installed, radio }: PlanInputs): void {
+  const known = new Set(cells.map(({ cell }) => cell));
+  for (const { cell, scheme } of installed) {
+    if (!known.has(cell)) throw new DomainError("Installed cell", cell, "a cell of the Cells table");
+    if (!radio.has(scheme)) throw new DomainError("Installed scheme", scheme, "a scheme of the Radio table");
+  }
+}
+
 /** Services of one area and year with their demand and routes: computed once, shared by the area's cells. */
 interface RoutedDemand {
   readonly service: ServiceRow;
@@ -141,6 +149,7 @@ interface RoutedDemand {
 export function planTable(inputs: PlanInputs, year?: number, percentile = MEDIAN): PlanRow[] {
   const { cells, demand } = inputs;
   checkShares(cells);
+  checkInstalled(inputs);
   const services = new ServiceYears(inputs.services);
   const routing = new Routing(inputs.routing);
   const installed = new InstalledCarriers(inputs.installed);
@@ -228,6 +237,7 @@ function planRow(
     capacityMet,
     limitedBy: limitedBy(capacityMet, required > maximumCarriers, state.limit, coverageMet, reach),
     spareShare: channels > 0 ? 1 - capacity.channelsRequired / channels : undefined,
+    maximumCarriers: Number.isFinite(maximumCarriers) ? maximumCarriers : undefined,
   };
 }
 

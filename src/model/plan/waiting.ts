@@ -7,7 +7,7 @@ import type { Scheme } from "./scheme";
 export interface WaitingGroup {
   readonly trafficE: number;
   readonly channels: number;
-  /** Mean holding time over all that wait. */
+  /** Mean holding time, weighted by traffic: what an arrival finds the channels busy with. */
   readonly holdingTimeS: number;
 }
 
@@ -16,7 +16,8 @@ function holdingTimeOf({ service }: CallStream, scheme: Scheme): number {
 }
 
 /**
- * Smallest number of channels at which every service keeps its waiting target, by Erlang C with the mean holding time.
+ * Smallest number of channels at which every service keeps its waiting target, by Erlang C with the mean holding time weighted
+ * by traffic: the calls that a newcomer waits for are the long ones, in proportion to their time on the channel.
  *
  * @param streams waiting calls and messages
  * @param scheme the scheme, whose channel rate gives the time of a message
@@ -24,8 +25,8 @@ function holdingTimeOf({ service }: CallStream, scheme: Scheme): number {
 export function waitingGroup(streams: readonly CallStream[], scheme: Scheme): WaitingGroup {
   const trafficE = totalTraffic(streams);
   if (trafficE === 0) return { trafficE: 0, channels: 0, holdingTimeS: 0 };
-  const arrivals = streams.reduce((sum, stream) => sum + stream.trafficE / holdingTimeOf(stream, scheme), 0);
-  const holdingTimeS = trafficE / arrivals;
+  const holdingTimeS =
+    streams.reduce((sum, stream) => sum + stream.trafficE * holdingTimeOf(stream, scheme), 0) / trafficE;
   let channels = 0;
   for (const { service } of streams) {
     const late = 1 - service.targetWaitShare;
