@@ -9,7 +9,7 @@ import { SHEETS } from "./sheet-names";
 
 /** Functions that the workbook calls, and the single functions by which a row of the plan can be recomputed by hand. */
 const STATED = [
-  ...["PLAN.DEMAND", "PLAN.TABLE", "PLAN.SUMMARY", "PLAN.CHANGES", "METHOD.TEXT"],
+  ...["PLAN.DEMAND", "PLAN.TABLE", "PLAN.EXPANSION", "PLAN.SUMMARY", "PLAN.CHANGES", "METHOD.TEXT"],
   ...[
     "TRAFFIC.CALLS",
     "TRAFFIC.GROUP",

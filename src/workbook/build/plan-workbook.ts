@@ -25,7 +25,7 @@ const PLAN_HEADINGS = [
     "throughputMbps",
   ],
   ...["uplinkLoad", "downlinkLoad", "interferenceMarginDb", "radiusKm", "radiusNeededKm", "coverageMet", "capacityMet"],
-  ...["limitedBy", "spareShare", "users"],
+  ...["limitedBy", "spareShare", "users", "maximumCarriers"],
 ];
 
 const SUMMARY_HEADINGS = [
@@ -127,6 +127,20 @@ async function addResults(book: Book, functions: FunctionTable): Promise<void> {
     [
       { formula: `=CAP.PLAN.SUMMARY(${plan},"year")`, column: 1, headings: ["year", ...SUMMARY_HEADINGS] },
       { formula: `=CAP.PLAN.SUMMARY(${plan},"scheme")`, column: 14, headings: ["scheme", ...SUMMARY_HEADINGS] },
+    ],
+    functions,
+  );
+  await addResultSheet(
+    book,
+    SHEETS.expansion,
+    "Expansion",
+    "The cheapest steps of the ladder that keep every cell within its targets, with dates to order by; cells that need nothing are left out.",
+    [
+      {
+        formula: `=CAP.PLAN.EXPANSION(${plan},LadderTable)`,
+        column: 1,
+        headings: ["cell", "step", "orderBy", "inServiceBy", "cost"],
+      },
     ],
     functions,
   );

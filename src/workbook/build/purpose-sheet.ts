@@ -14,6 +14,7 @@ const STEPS: readonly (readonly [string, string])[] = [
   [SHEETS.ladder, "Steps by which a cell can grow, with cost and lead time."],
   [SHEETS.traffic, "Result: erlang and Mbit/s of each service, area and year."],
   [SHEETS.plan, "Result: need, stock and quality of every cell, year and scheme, and what is missing first."],
+  [SHEETS.expansion, "Result: the cheapest steps for every cell that falls short, with dates to order by and costs."],
   [`${SHEETS.summary}, ${SHEETS.dashboard}`, "Result: totals and charts."],
   [SHEETS.method, "Formula, source and assumptions of every function that the workbook uses."],
   [SHEETS.checks, "Sums that must agree and errors counted. Look here before you trust a number."],

@@ -10,6 +10,7 @@ export const SHEETS = {
   ladder: "Ladder",
   traffic: "Traffic",
   plan: "Plan",
+  expansion: "Expansion",
   summary: "Summary",
   dashboard: "Dashboard",
   method: "Method",
