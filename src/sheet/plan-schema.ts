@@ -167,4 +167,4 @@ export const RADIO_ZERO_IS_BLANK: ReadonlySet<string> = new Set([
   "mobileNoiseFigureDb",
 ]);
 
-export const RADIO_TEXTS: readonly string[] = ["access", "pathLossModel", "environment", "sight"];
+export const RADIO_TEXTS: readonly string[] = ["access", "scheme", "pathLossModel", "environment", "sight"];

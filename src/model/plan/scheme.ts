@@ -44,9 +44,9 @@ export class Scheme {
   }
 }
 
-/** The access scheme: stated in the row "access", or told by the parameters that only one scheme has. */
+/** The access scheme: stated in the row "access" (or "scheme", as profiles of standards call it), or told by the parameters that only one scheme has. */
 function accessOf(name: string, column: RadioColumn): Access {
-  const stated = String(column.get("access") ?? "").toUpperCase();
+  const stated = String(column.get("access") ?? column.get("scheme") ?? "").toUpperCase();
   const known = ACCESS_SCHEMES.find((access) => access === stated || access === name.toUpperCase());
   if (known) return known;
   if (stated !== "") throw new DomainError(`Radio access of ${name}`, stated, ACCESS_SCHEMES.join(", "));
