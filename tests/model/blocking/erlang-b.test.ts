@@ -43,15 +43,8 @@ describe("50-digit values of the defining integral", () => {
   });
 
   test("the inverses give back the traffic", () => {
-    for (const rows of Object.values(regimes) as number[][][]) {
-      for (const [traffic, channels, blocking, carried, , free] of rows as [
-        number,
-        number,
-        number,
-        number,
-        number,
-        number,
-      ][]) {
+    for (const rows of Object.values<[number, number, number, number, number, number][]>(regimes as never)) {
+      for (const [traffic, channels, blocking, carried, , free] of rows) {
         if (channels === 0) continue;
         // Where a quantity hardly moves with the traffic its last digit is worth more than 1e-12 of it: ask where it does.
         if (blocking > 1e-300 && free > 1e-3) {
