@@ -8,6 +8,7 @@ import { build } from "esbuild";
 import { generate } from "./generate.mjs";
 import { writeLibrary } from "./library.mjs";
 import { writeManifest } from "./manifest.mjs";
+import { writeStarter } from "./starter.mjs";
 
 const root = resolve(fileURLToPath(import.meta.url), "../../..");
 const dist = join(root, "dist");
@@ -35,6 +36,26 @@ async function main() {
     target: "es2020",
     minify: true,
     treeShaking: true,
+    globalName: "capacityFunctions",
+  });
+  await build({
+    ...common,
+    entryPoints: ["src/pane/entry.ts", "src/pane/pane.css"],
+    outdir: "dist",
+    entryNames: "pane",
+    format: "iife",
+    platform: "browser",
+    target: "es2020",
+    minify: true,
+  });
+  await build({
+    ...common,
+    entryPoints: ["src/server/entry.ts"],
+    outfile: "dist/server.js",
+    format: "cjs",
+    platform: "node",
+    target: "node20",
+    packages: "external",
   });
   if (existsSync(join(root, "src/command/entry.ts"))) {
     await build({
@@ -46,6 +67,7 @@ async function main() {
       target: "node20",
       banner: { js: "#!/usr/bin/env node" },
     });
+    writeStarter(root);
   }
   writeManifest(root, version);
   writeLibrary(root);
