@@ -4,6 +4,7 @@ import { CHANGES_HEADINGS, SHEETS } from "./build/sheet-names";
 import { HEADING_ROW } from "./build/input-sheet";
 import { loadBook, type Book } from "./engine/library";
 import { WorkbookFailure } from "./failure";
+import { putForecast, type TableEdit } from "./forecast-edit";
 import type { FunctionTable } from "./function-table";
 import { Package } from "./package/archive";
 import { patchCells, type NewValue } from "./package/patch-cells";
@@ -23,73 +24,26 @@ export interface Refreshed {
   readonly changes: unknown[][];
 }
 
-interface ForecastEdit {
+interface ForecastCells {
+  readonly sheet: string;
   readonly values: Map<string, NewValue>;
-  readonly matched: number;
-  readonly added: number;
-  readonly gone: number;
   readonly lastRow: number;
+  readonly edit: TableEdit;
 }
 
-/** Rows are matched by area and year, so that the planner's notes beside them stay with them. */
-function editForecast(book: Book, forecast: readonly (readonly unknown[])[]): ForecastEdit {
-  const range = namedRange(book, DEMAND_RANGE);
-  const sheet = book.getWorksheet(range.sheet);
-  if (!sheet) throw new WorkbookFailure(`the workbook has no sheet named ${range.sheet}.`);
-  const columnOf = new Map<string, number>();
-  for (let c = range.from.column; c <= range.to.column; c++) {
-    columnOf.set(
-      String(plainValue(sheet, range.from.row, c))
-        .trim()
-        .toLowerCase(),
-      c,
-    );
-  }
-  const place = (name: string): number => {
-    const column = columnOf.get(name.toLowerCase());
-    if (column === undefined)
-      throw new WorkbookFailure(`sheet ${range.sheet} has no column ${name} in row ${range.from.row}.`);
-    return column;
-  };
-  const [area, year, users] = [place("area"), place("year"), place("users")];
-  const headings = forecast[0]!.map(String);
-  const errorAt = headings.indexOf("errorPerYear");
-  const errorColumn = errorAt < 0 ? undefined : columnOf.get("errorperyear");
-  const rowOf = new Map<string, number>();
-  let lastFilled = range.from.row;
-  for (let row = range.from.row + 1; row <= range.to.row; row++) {
-    const name = plainValue(sheet, row, area);
-    if (name === null || name === "") continue;
-    rowOf.set(JSON.stringify([String(name), Number(plainValue(sheet, row, year))]), row);
-    lastFilled = row;
-  }
-  const values = new Map<string, NewValue>();
-  const put = (row: number, column: number, value: unknown): void =>
-    void values.set(`${row},${column}`, { value, input: true });
-  let matched = 0;
-  let added = 0;
-  let next = lastFilled + 1;
-  for (const cells of forecast.slice(1)) {
-    const key = JSON.stringify([String(cells[0]), Number(cells[1])]);
-    let row = rowOf.get(key);
-    if (row === undefined) {
-      row = next++;
-      added++;
-      put(row, area, cells[0]);
-      put(row, year, cells[1]);
-    } else {
-      rowOf.delete(key);
-      matched++;
-    }
-    put(row, users, cells[2]);
-    if (errorColumn !== undefined && cells[errorAt] !== null && cells[errorAt] !== undefined)
-      put(row, errorColumn, cells[errorAt]);
-  }
-  for (const row of rowOf.values()) {
-    for (const column of [area, year, users, ...(errorColumn === undefined ? [] : [errorColumn])])
-      put(row, column, null);
-  }
-  return { values, matched, added, gone: rowOf.size, lastRow: next - 1 };
+/** The cells of the workbook that the new forecast changes. */
+function forecastCells(book: Book, forecast: readonly (readonly unknown[])[]): ForecastCells {
+  const { sheet: name, from, to } = namedRange(book, DEMAND_RANGE);
+  const sheet = book.getWorksheet(name);
+  if (!sheet) throw new WorkbookFailure(`the workbook has no sheet named ${name}.`);
+  const table = Array.from({ length: to.row - from.row + 1 }, (_, r) =>
+    Array.from({ length: to.column - from.column + 1 }, (_, c) => plainValue(sheet, from.row + r, from.column + c)),
+  );
+  const edit = putForecast(table, forecast, `sheet ${name}`);
+  const values = new Map(
+    edit.edits.map(({ row, column, value }) => [`${from.row + row},${from.column + column}`, { value, input: true }]),
+  );
+  return { sheet: name, values, lastRow: from.row + edit.rows - 1, edit };
 }
 
 /** Lets the named range reach its last row. */
@@ -140,11 +94,10 @@ export async function refresh(
 ): Promise<Refreshed> {
   const old = await recalculate(bytes, functions);
   const before = planOf(await loadBook(old.bytes));
-  const edit = editForecast(await loadBook(bytes), forecast);
+  const { sheet, values, lastRow, edit } = forecastCells(await loadBook(bytes), forecast);
   const file = Package.open(bytes);
-  const { sheet } = namedRange(await loadBook(bytes), DEMAND_RANGE);
-  patchCells(file, new Map([[sheet, edit.values]]));
-  growRange(file, DEMAND_RANGE, edit.lastRow);
+  patchCells(file, new Map([[sheet, values]]));
+  growRange(file, DEMAND_RANGE, lastRow);
   const renewed = await recalculate(file.bytes(), functions);
   const after = await loadBook(renewed.bytes);
   const changes = changeCells(before, planOf(after));
