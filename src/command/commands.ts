@@ -6,6 +6,7 @@ import { canonicalId, textOf } from "../sheet/registry";
 import { closest } from "../sheet/spelling";
 import { CellError } from "../sheet/cell-error";
 import { planWorkbook } from "../workbook/build/plan-workbook";
+import { SHEETS } from "../workbook/build/sheet-names";
 import { compare } from "../workbook/compare";
 import { readForecast } from "../workbook/csv/forecast";
 import { readPlanFiles } from "../workbook/csv/plan-files";
@@ -13,13 +14,13 @@ import { loadBook } from "../workbook/engine/library";
 import { evaluate } from "../workbook/evaluate";
 import { WorkbookFailure } from "../workbook/failure";
 import { handover } from "../workbook/handover";
-import { planOf } from "../workbook/plan-in-book";
+import { planOf, tableOf } from "../workbook/plan-in-book";
 import { recalculate } from "../workbook/recalculate";
 import { refresh } from "../workbook/refresh";
 import { DEMO_FILES } from "./demo-tables";
 import { makeFolder, readBytes, readText, readTextIfThere, requireTarget, writeFileWhole } from "./files";
 import { WrongCall, type Surroundings } from "./io";
-import { aligned, summaryOf } from "./summary-text";
+import { aligned, expansionLines, summaryOf } from "./summary-text";
 
 /** Options and words of a call. */
 export interface Call {
@@ -82,7 +83,10 @@ async function makePlan(
 }
 
 async function printSummary(bytes: Uint8Array, around: Surroundings): Promise<void> {
-  for (const line of summaryOf(planOf(await loadBook(bytes)))) around.out(line);
+  const book = await loadBook(bytes);
+  for (const line of summaryOf(planOf(book))) around.out(line);
+  const expansion = tableOf(book, SHEETS.expansion);
+  if (expansion && expansion.length > 0) for (const line of expansionLines(expansion)) around.out(line);
 }
 
 export const newPlan: Command = async (call, around) => {

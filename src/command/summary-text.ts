@@ -88,3 +88,20 @@ function firstShort(plan: readonly Row[]): string[] {
     return `${scheme}: ${cells} cells fall short, the first in ${first}; missing most often: ${reason}.`;
   });
 }
+
+/** What the ladder makes of it: steps, costs, and what to order next. */
+export function expansionLines(expansion: readonly Row[]): string[] {
+  const at = (name: string): number => expansion[0]!.indexOf(name);
+  const steps = expansion.slice(1).filter((row) => row[at("orderBy")] !== "" && row[at("orderBy")] !== null);
+  const helpless = expansion.length - 1 - steps.length;
+  if (expansion.length === 1) return ["Ladder: no cell needs a step."];
+  const cost = steps.reduce((sum, row) => sum + (row[at("cost")] as number), 0);
+  const cells = new Set(steps.map((row) => row[at("cell")])).size;
+  const first = steps.map((row) => String(row[at("orderBy")])).sort()[0];
+  const lines = [
+    `Ladder: ${steps.length} steps in ${cells} cells cost ${cost.toLocaleString("en-US")} to the end of the plan; the first is to be ordered by ${first}.`,
+  ];
+  if (helpless > 0)
+    lines.push(`${helpless} cells keep a shortage that no step of the ladder mends; the sheet Expansion says which.`);
+  return lines;
+}

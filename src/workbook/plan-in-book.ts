@@ -1,6 +1,7 @@
 /** Finds the plan and the named tables inside a workbook. */
 import { CellError } from "../sheet/cell-error";
 import { parseRange, type Place } from "./address";
+import { HEADING_ROW } from "./build/input-sheet";
 import type { Book, Sheet } from "./engine/library";
 import { WorkbookFailure } from "./failure";
 
@@ -40,22 +41,32 @@ function headingRow(sheet: Sheet): number | undefined {
 export function planOf(book: Book): unknown[][] {
   for (const sheet of book.worksheets) {
     const top = headingRow(sheet);
-    if (top === undefined) continue;
-    const headings: string[] = [];
-    for (let c = 1; c <= sheet.columnCount; c++) {
-      const name = plainValue(sheet, top, c);
-      if (name === null || name === "") break;
-      headings.push(String(name));
-    }
-    const rows: unknown[][] = [headings];
-    for (let row = top + 1; row <= sheet.rowCount; row++) {
-      const first = plainValue(sheet, row, 1);
-      if (first === null || first === "") break;
-      rows.push(headings.map((_, c) => plainValue(sheet, row, c + 1)));
-    }
-    return rows;
+    if (top !== undefined) return tableBelow(sheet, top);
   }
   throw new WorkbookFailure("no sheet of the workbook holds a plan (headings cell, year, scheme, carriersRequired).");
+}
+
+/** The table of a result sheet, headings first; undefined where the workbook has no such sheet. */
+export function tableOf(book: Book, name: string): unknown[][] | undefined {
+  const sheet = book.getWorksheet(name);
+  return sheet && tableBelow(sheet, HEADING_ROW);
+}
+
+/** A table from its row of headings down to the first row without a first cell. */
+function tableBelow(sheet: Sheet, top: number): unknown[][] {
+  const headings: string[] = [];
+  for (let c = 1; c <= sheet.columnCount; c++) {
+    const name = plainValue(sheet, top, c);
+    if (name === null || name === "") break;
+    headings.push(String(name));
+  }
+  const rows: unknown[][] = [headings];
+  for (let row = top + 1; row <= sheet.rowCount; row++) {
+    const first = plainValue(sheet, row, 1);
+    if (first === null || first === "") break;
+    rows.push(headings.map((_, c) => plainValue(sheet, row, c + 1)));
+  }
+  return rows;
 }
 
 export interface NamedRange {

@@ -1,12 +1,12 @@
 /** Makes the workbook of a plan from its tables: inputs, a handful of spilled formulas, charts, method and checks. */
 import type { PlanTables } from "../csv/plan-files";
-import { newBook, writeBook, type Book } from "../engine/library";
+import { newBook, writeBook, type Book, type Sheet } from "../engine/library";
 import type { FunctionTable } from "../function-table";
 import { recalculate, type Recalculated } from "../recalculate";
 import { addChecks } from "./checks-sheet";
 import { addDashboard } from "./dashboard-sheet";
 import { addInputSheet, type InputTable } from "./input-sheet";
-import { locked, printed, putHeading, putTitle } from "./look";
+import { locked, markInput, printed, putHeading, putNote, putTitle } from "./look";
 import { addMethod } from "./method-sheet";
 import type { Origin } from "./origin";
 import { addPurpose } from "./purpose-sheet";
@@ -89,6 +89,34 @@ function inputTables(tables: PlanTables): InputTable[] {
   ];
 }
 
+const PERCENTILE_COLUMN = 27;
+const PERCENTILE_CELL = "$AA$3";
+const USUAL_PERCENTILE = 0.9;
+
+/** The percentile of the second summary: an input beside the results. */
+function addPercentile(sheet: Sheet): void {
+  const cell = sheet.getCell(3, PERCENTILE_COLUMN);
+  markInput(cell);
+  cell.value = USUAL_PERCENTILE;
+  cell.numFmt = "0 %";
+  putNote(
+    sheet.getCell(3, PERCENTILE_COLUMN + 1),
+    "percentile of the forecast (errorPerYear); the table below is the plan with it. Percentiles of cells do not add: the sum is on the safe side.",
+  );
+  sheet.getCell(3, PERCENTILE_COLUMN + 1).alignment = { wrapText: false };
+  (sheet.dataValidations as unknown as { add(area: string, rule: object): void }).add("AA3", {
+    type: "decimal",
+    operator: "between",
+    formulae: [0.01, 0.99],
+    showErrorMessage: true,
+    errorTitle: "percentile",
+    error: "A share from 1 % to 99 %.",
+    showInputMessage: true,
+    promptTitle: "percentile",
+    prompt: "Usually 80 % to 95 %; 50 % is the forecast itself.",
+  });
+}
+
 async function addResults(book: Book, functions: FunctionTable): Promise<void> {
   await addResultSheet(
     book,
@@ -119,17 +147,23 @@ async function addResults(book: Book, functions: FunctionTable): Promise<void> {
     functions,
   );
   const plan = `_xlfn.ANCHORARRAY(${SHEETS.plan}!$A$5)`;
-  await addResultSheet(
+  const summary = await addResultSheet(
     book,
     SHEETS.summary,
     "Summary",
-    "Totals of the plan by year and, to the right, by scheme (there years add up). Percentiles of cells do not add.",
+    "Totals of the plan by year; to the right by scheme (there years add up), and by year at the percentile of the forecast in AA3.",
     [
       { formula: `=CAP.PLAN.SUMMARY(${plan},"year")`, column: 1, headings: ["year", ...SUMMARY_HEADINGS] },
       { formula: `=CAP.PLAN.SUMMARY(${plan},"scheme")`, column: 14, headings: ["scheme", ...SUMMARY_HEADINGS] },
+      {
+        formula: `=CAP.PLAN.SUMMARY(CAP.PLAN.TABLE(CellsTable,DemandTable,ServicesTable,RoutingTable,RadioTable,InstalledTable,,${PERCENTILE_CELL}),"year")`,
+        column: PERCENTILE_COLUMN,
+        headings: ["year", ...SUMMARY_HEADINGS],
+      },
     ],
     functions,
   );
+  addPercentile(summary);
   await addResultSheet(
     book,
     SHEETS.expansion,
