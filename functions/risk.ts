@@ -14,7 +14,7 @@ import { number, perCell } from "../src/sheet/call";
  * @method Erlang-B channels of A (1 + e)^z, z the standard normal quantile of the confidence: exact, since blocking grows with traffic.
  * @source A. K. Erlang 1917 (Erlang B); lognormal forecast error: common practice.
  * @assumes The logarithm of the traffic is normal with median ln A and deviation ln(1 + e).
- * @example =CAP.RISK.CHANNELS(20, 0.2, 0.02, 0.9) is 35
+ * @example =CAP.RISK.CHANNELS(20, 0.2, 0.02, 0.9) is 34
  */
 export function riskChannels(trafficE: any[][], errorShare: any[][], blocking: any[][], confidence: any[][]): any[][] {
   return perCell(risk.channels, {
