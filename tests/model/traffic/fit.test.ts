@@ -199,3 +199,39 @@ describe("as a worksheet function", () => {
     expect(cell.message).toMatch(/do not bend/);
   });
 });
+
+test("any series gives a band around its level, or a reason", () => {
+  const level = fc.oneof(
+    fc.double({ min: 0, max: 1000, noNaN: true }),
+    fc.double({ min: 0, max: 1e15, noNaN: true }),
+    fc.constantFrom(0, 1e-300, 1, 1e15),
+  );
+  const at = fc.oneof(fc.integer({ min: 0, max: 30 }), fc.double({ min: 0, max: 1000, noNaN: true }));
+  let answered = 0;
+  fc.assert(
+    fc.property(
+      fc.array(fc.tuple(at, level), { minLength: 3, maxLength: 12 }),
+      fc.constantFrom<FitModel>("linear", "compound", "logistic", "gompertz", "bass"),
+      at,
+      (points, model, target) => {
+        try {
+          const sorted = points.map(([, y]) => y).sort((a, b) => a - b);
+          const answer = fit(
+            points.map(([t]) => t),
+            sorted,
+            model,
+            target,
+          );
+          answered++;
+          expect(answer.every((value) => Number.isFinite(value) && value >= 0)).toBe(true);
+          expect(answer[1]).toBeLessThanOrEqual(answer[0]);
+          expect(answer[2]).toBeGreaterThanOrEqual(answer[0]);
+        } catch (error) {
+          if (!(error instanceof NoAnswerError || error instanceof DomainError)) throw error;
+        }
+      },
+    ),
+    { seed: 34, numRuns: 400 },
+  );
+  expect(answered).toBeGreaterThan(100);
+});
