@@ -7,9 +7,11 @@ import { addChecks } from "./checks-sheet";
 import { addDashboard } from "./dashboard-sheet";
 import { addInputSheet, type InputTable } from "./input-sheet";
 import { locked, markInput, printed, putHeading, putNote, putTitle } from "./look";
+import { addLinkBudget } from "./link-budget-sheet";
 import { addMethod } from "./method-sheet";
 import type { Origin } from "./origin";
 import { addPurpose } from "./purpose-sheet";
+import { addReceiver } from "./receiver-sheet";
 import { addResultSheet } from "./result-sheet";
 import { CHANGES_HEADINGS, SHEETS } from "./sheet-names";
 
@@ -221,6 +223,8 @@ export async function planWorkbook(
   await addResults(book, functions);
   const years = new Set(tables.demand.slice(1).map((row) => row[1])).size;
   await addDashboard(book, years);
+  await addLinkBudget(book, functions);
+  await addReceiver(book, functions);
   await addMethod(book, functions);
   await addChecks(book);
   await addChanges(book);

@@ -16,6 +16,8 @@ const STEPS: readonly (readonly [string, string])[] = [
   [SHEETS.plan, "Result: need, stock and quality of every cell, year and scheme, and what is missing first."],
   [SHEETS.expansion, "Result: the cheapest steps for every cell that falls short, with dates to order by and costs."],
   [`${SHEETS.summary}, ${SHEETS.dashboard}`, "Result: totals and charts."],
+  [SHEETS.linkBudget, "A link budget line by line, both directions, before and at the planned load."],
+  [SHEETS.receiver, "Codes, powers and delays of an uplink, and what each receiver makes of them."],
   [SHEETS.method, "Formula, source and assumptions of every function that the workbook uses."],
   [SHEETS.checks, "Sums that must agree and errors counted. Look here before you trust a number."],
   [SHEETS.changes, "What a new forecast moved."],

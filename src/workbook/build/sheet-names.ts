@@ -13,6 +13,8 @@ export const SHEETS = {
   expansion: "Expansion",
   summary: "Summary",
   dashboard: "Dashboard",
+  linkBudget: "Link budget",
+  receiver: "Receiver",
   method: "Method",
   checks: "Checks",
   changes: "Changes",
