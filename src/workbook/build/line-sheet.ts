@@ -39,7 +39,7 @@ export function putLineInput(sheet: Sheet, cell: Cell, label: string, input: Lin
 
 /** A formula that gives one value. */
 export function putFormula(cell: Cell, formula: string, functions: FunctionTable, format?: string): void {
-  cell.value = { formula: toStored(formula, functions) } as never;
+  cell.value = { formula: toStored(formula, functions) };
   if (format !== undefined) cell.numFmt = format;
   cell.font = { name: FONT, size: 11, bold: true, color: { argb: INK } };
 }

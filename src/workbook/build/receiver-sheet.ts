@@ -30,7 +30,7 @@ const USERS: readonly (readonly [code: number, powerDbm: number, delayChips: num
 ];
 
 export async function addReceiver(book: Book, functions: FunctionTable): Promise<void> {
-  const sheet = book.addWorksheet(SHEETS.receiver, { views: [{ showGridLines: false }] } as never);
+  const sheet = book.addWorksheet(SHEETS.receiver, { views: [{ showGridLines: false }] });
   putTitle(
     sheet,
     "Receiver",
