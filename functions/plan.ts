@@ -5,16 +5,8 @@ import { sites } from "../src/model/plan/sites";
 import { GROUPINGS } from "../src/model/plan/summary";
 import { radius, sectorsOfArea } from "../src/model/radio/cell";
 import { amount } from "../src/model/traffic/traffic";
-import {
-  flag,
-  number,
-  optionalChoice,
-  optionalNumber,
-  perCell,
-  perCellRow,
-  rawRange,
-  wholeTable,
-} from "../src/sheet/call";
+import { flag, number, optionalChoice, optionalNumber, perCell, perCellRow, rawRange } from "../src/sheet/call";
+import { longTable } from "../src/sheet/long-table";
 import { changeCells, demandCells, expansionCells, planCells, summaryCells } from "../src/sheet/plan-tables";
 
 /**
@@ -94,7 +86,7 @@ export function planSites(
  * @example =CAP.PLAN.DEMAND({"area","year","users";"Quay",2027,100}, {"service","kind","userShare","callsPerHour","holdingTimeS";"voice","call",1,2,90}) is "area"
  */
 export function planDemand(demand: any[][], services: any[][]): any[][] {
-  return wholeTable(demandCells, { demand: rawRange(demand), services: rawRange(services) });
+  return longTable(demandCells, { demand: rawRange(demand), services: rawRange(services) });
 }
 
 /**
@@ -125,7 +117,7 @@ export function planTable(
   year?: any[][],
   percentile?: any[][],
 ): any[][] {
-  return wholeTable(planCells, {
+  return longTable(planCells, {
     cells: rawRange(cells),
     demand: rawRange(demand),
     services: rawRange(services),
@@ -150,7 +142,7 @@ export function planTable(
  * @example =CAP.PLAN.SUMMARY({"cell","year","scheme","users";"Q1",2027,"FDMA",100}) is "year"
  */
 export function planSummary(plan: any[][], by?: any[][]): any[][] {
-  return wholeTable(summaryCells, { plan: rawRange(plan), by: optionalChoice(by, GROUPINGS, "year") });
+  return longTable(summaryCells, { plan: rawRange(plan), by: optionalChoice(by, GROUPINGS, "year") });
 }
 
 /**
@@ -166,7 +158,7 @@ export function planSummary(plan: any[][], by?: any[][]): any[][] {
  * @example =CAP.PLAN.EXPANSION({"cell","year","scheme","carriersRequired","carriersInstalled";"Q1",2027,"FDMA",3,2}, {"step","fromScheme","carriersAdded","cost","leadTimeMonths";"add carrier","FDMA",1,100,6}) is "cell"
  */
 export function planExpansion(plan: any[][], ladder: any[][]): any[][] {
-  return wholeTable(expansionCells, { plan: rawRange(plan), ladder: rawRange(ladder) });
+  return longTable(expansionCells, { plan: rawRange(plan), ladder: rawRange(ladder) });
 }
 
 /**
@@ -183,7 +175,7 @@ export function planExpansion(plan: any[][], ladder: any[][]): any[][] {
  * @example =CAP.PLAN.CHANGES({"cell","year","scheme","users";"Q1",2027,"FDMA",100}, {"cell","year","scheme","users";"Q1",2027,"FDMA",120}) is "cell"
  */
 export function planChanges(before: any[][], after: any[][], tolerance?: any[][]): any[][] {
-  return wholeTable(changeCells, {
+  return longTable(changeCells, {
     before: rawRange(before),
     after: rawRange(after),
     tolerance: optionalNumber(tolerance, nonNegative),

@@ -14,7 +14,7 @@ import type {
   ServiceRow,
 } from "../model/plan/records";
 import { summarise, type Grouping, type SummedRow } from "../model/plan/summary";
-import { planTable } from "../model/plan/table";
+import { planRows } from "../model/plan/table";
 import { contains } from "../model/domain";
 import { DomainError } from "../model/errors";
 import { isBlank } from "./argument";
@@ -26,14 +26,14 @@ import { labelled, readTable, type Schema, type TableRows } from "./table";
 type Cells = readonly (readonly unknown[])[];
 
 /** Reads a table of which every row must be right, since rows of a plan hang together. */
-function readWhole(cells: Cells, name: string, columns: Schema): TableRows {
+function readWhole(cells: Cells, name: string, columns: Schema, mayBeEmpty = false): TableRows {
   const table = readTable(cells, name, columns);
   const [first] = table.problems;
   if (first) {
     const more = table.problems.length - 1;
     throw wrongInput(more > 0 ? `${first.message} (${more} more wrong cells in ${name}.)` : first.message);
   }
-  if (table.count === 0) throw wrongInput(`${name} has headings but no rows.`);
+  if (table.count === 0 && !mayBeEmpty) throw wrongInput(`${name} has headings but no rows.`);
   return table;
 }
 
@@ -155,35 +155,37 @@ export function demandCells(demand: Cells, services: Cells): unknown[][] {
   );
 }
 
+type PlanCell = string | number | boolean | undefined;
+
 /** Columns of the plan, in the order in which they are written. */
-const PLAN_COLUMNS: readonly (keyof PlanRow)[] = [
-  "cell",
-  "site",
-  "area",
-  "year",
-  "scheme",
-  "callTrafficE",
-  "waitingTrafficE",
-  "downMbps",
-  "upMbps",
-  "channelsRequired",
-  "carriersRequired",
-  "carriersInstalled",
-  "blocking",
-  "worstService",
-  "waitS",
-  "throughputMbps",
-  "uplinkLoad",
-  "downlinkLoad",
-  "interferenceMarginDb",
-  "radiusKm",
-  "radiusNeededKm",
-  "coverageMet",
-  "capacityMet",
-  "limitedBy",
-  "spareShare",
-  "users",
-  "maximumCarriers",
+const PLAN_COLUMNS: readonly (readonly [name: keyof PlanRow, of: (row: PlanRow) => PlanCell])[] = [
+  ["cell", (row) => row.cell],
+  ["site", (row) => row.site],
+  ["area", (row) => row.area],
+  ["year", (row) => row.year],
+  ["scheme", (row) => row.scheme],
+  ["callTrafficE", (row) => row.callTrafficE],
+  ["waitingTrafficE", (row) => row.waitingTrafficE],
+  ["downMbps", (row) => row.downMbps],
+  ["upMbps", (row) => row.upMbps],
+  ["channelsRequired", (row) => row.channelsRequired],
+  ["carriersRequired", (row) => row.carriersRequired],
+  ["carriersInstalled", (row) => row.carriersInstalled],
+  ["blocking", (row) => row.blocking],
+  ["worstService", (row) => row.worstService],
+  ["waitS", (row) => row.waitS],
+  ["throughputMbps", (row) => row.throughputMbps],
+  ["uplinkLoad", (row) => row.uplinkLoad],
+  ["downlinkLoad", (row) => row.downlinkLoad],
+  ["interferenceMarginDb", (row) => row.interferenceMarginDb],
+  ["radiusKm", (row) => row.radiusKm],
+  ["radiusNeededKm", (row) => row.radiusNeededKm],
+  ["coverageMet", (row) => row.coverageMet],
+  ["capacityMet", (row) => row.capacityMet],
+  ["limitedBy", (row) => row.limitedBy],
+  ["spareShare", (row) => row.spareShare],
+  ["users", (row) => row.users],
+  ["maximumCarriers", (row) => row.maximumCarriers],
 ];
 
 /** PLAN.TABLE on cells. */
@@ -197,7 +199,7 @@ export function planCells(
   year?: number,
   percentile?: number,
 ): unknown[][] {
-  const rows = planTable(
+  const rows = planRows(
     {
       cells: readRows<CellRow>(cells, "Cells", schema.CELLS),
       demand: readDemand(demand),
@@ -209,10 +211,13 @@ export function planCells(
     year,
     percentile,
   );
-  return labelled(
-    PLAN_COLUMNS,
-    rows.map((row) => PLAN_COLUMNS.map((column) => row[column] ?? "")),
-  );
+  const table: unknown[][] = [PLAN_COLUMNS.map(([name]) => name)];
+  for (const row of rows) {
+    const line = new Array<unknown>(PLAN_COLUMNS.length);
+    for (let c = 0; c < line.length; c++) line[c] = PLAN_COLUMNS[c]![1](row) ?? "";
+    table.push(line);
+  }
+  return table;
 }
 
 function flagAt(cells: Cells, plan: TableRows, column: string): (row: number) => boolean {
@@ -223,16 +228,41 @@ function flagAt(cells: Cells, plan: TableRows, column: string): (row: number) =>
   };
 }
 
+/** Rows made as they are asked for, so that none is kept. */
+function* each<Row>(count: number, rowAt: (i: number) => Row): Generator<Row, void> {
+  for (let i = 0; i < count; i++) yield rowAt(i);
+}
+
 /** PLAN.SUMMARY on cells. */
 export function summaryCells(planCells: Cells, by: Grouping): unknown[][] {
   const plan = readWhole(planCells, "Plan", schema.PLAN);
   const capacityMet = flagAt(planCells, plan, "capacityMet");
   const coverageMet = flagAt(planCells, plan, "coverageMet");
   const key = by === "year" ? plan.numbers("year") : plan.texts(by);
-  const rows = rowsOf<SummedRow>(plan, schema.PLAN);
-  const summary = summarise(
-    rows.map((row, i) => ({ ...row, key: key[i]!, capacityMet: capacityMet(i), coverageMet: coverageMet(i) })),
-  );
+  const cell = plan.texts("cell");
+  const users = plan.numbers("users");
+  const callTrafficE = plan.numbers("callTrafficE");
+  const waitingTrafficE = plan.numbers("waitingTrafficE");
+  const downMbps = plan.numbers("downMbps");
+  const upMbps = plan.numbers("upMbps");
+  const carriersRequired = plan.numbers("carriersRequired");
+  const carriersInstalled = plan.numbers("carriersInstalled");
+  const blocking = plan.numbers("blocking");
+  const rowAt = (i: number): SummedRow => ({
+    key: key[i]!,
+    cell: cell[i]!,
+    users: users[i]!,
+    callTrafficE: callTrafficE[i]!,
+    waitingTrafficE: waitingTrafficE[i]!,
+    downMbps: downMbps[i]!,
+    upMbps: upMbps[i]!,
+    carriersRequired: carriersRequired[i]!,
+    carriersInstalled: carriersInstalled[i]!,
+    blocking: blocking[i]!,
+    capacityMet: capacityMet(i),
+    coverageMet: coverageMet(i),
+  });
+  const summary = summarise(each(plan.count, rowAt));
   return labelled(
     [
       by,
@@ -269,11 +299,34 @@ export function summaryCells(planCells: Cells, by: Grouping): unknown[][] {
 export function expansionCells(planCells: Cells, ladderCells: Cells): unknown[][] {
   const plan = readWhole(planCells, "Plan", schema.PLAN);
   const coverageMet = flagAt(planCells, plan, "coverageMet");
-  const rows = rowsOf<Omit<NeedRow, "coverageMet">>(plan, schema.PLAN);
-  const steps = expansion(
-    rows.map((row, i) => ({ ...row, coverageMet: coverageMet(i) })),
-    readRows<LadderStep>(ladderCells, "Ladder", schema.LADDER),
-  );
+  const cell = plan.texts("cell");
+  const year = plan.numbers("year");
+  const scheme = plan.texts("scheme");
+  const users = plan.numbers("users");
+  const callTrafficE = plan.numbers("callTrafficE");
+  const waitingTrafficE = plan.numbers("waitingTrafficE");
+  const maximumCarriers = plan.numbers("maximumCarriers");
+  const channelsRequired = plan.numbers("channelsRequired");
+  const carriersRequired = plan.numbers("carriersRequired");
+  const carriersInstalled = plan.numbers("carriersInstalled");
+  const radiusKm = plan.numbers("radiusKm");
+  const radiusNeededKm = plan.numbers("radiusNeededKm");
+  const rowAt = (i: number): NeedRow => ({
+    cell: cell[i]!,
+    year: year[i]!,
+    scheme: scheme[i]!,
+    users: users[i]!,
+    callTrafficE: callTrafficE[i]!,
+    waitingTrafficE: waitingTrafficE[i]!,
+    maximumCarriers: maximumCarriers[i]!,
+    channelsRequired: channelsRequired[i]!,
+    carriersRequired: carriersRequired[i]!,
+    carriersInstalled: carriersInstalled[i]!,
+    radiusKm: radiusKm[i]!,
+    radiusNeededKm: radiusNeededKm[i]!,
+    coverageMet: coverageMet(i),
+  });
+  const steps = expansion(each(plan.count, rowAt), rowsOf<LadderStep>(readWhole(ladderCells, "Ladder", schema.LADDER, true), schema.LADDER));
   return labelled(
     ["cell", "step", "orderBy", "inServiceBy", "cost"],
     steps.map((row) => [row.cell, row.step, row.orderBy, row.inServiceBy, row.cost]),

@@ -12,9 +12,6 @@ type Table = unknown[][];
 const YEARS = 10;
 const CELLS_OF_AREA = 5;
 const SHARES = [0.3, 0.25, 0.2, 0.15, 0.1];
-/** A sheet ends here; a larger plan is computed year by year, as a planner would have to. */
-const ROWS_OF_SHEET = 1_048_576;
-
 const services: Table = [
   [
     "service",
@@ -115,26 +112,17 @@ function measure(cellCount: number): Measurement {
     parts[part]! += (performance.now() - start) / 1000;
     return table;
   };
-  const schemes = 2;
-  const bySheet = cellCount * YEARS * schemes < ROWS_OF_SHEET;
   rowCount(timed("demand", () => planDemand(demand, services)));
-  let planRows = 0;
-  let steps = 0;
-  const tableOf = (year?: number): void => {
-    const plan = timed("table", () => planTable(cells, demand, services, routing, radio, installed, [[year ?? null]]));
-    planRows += rowCount(plan);
-    steps += rowCount(timed("expansion", () => planExpansion(plan, ladder)));
-    rowCount(timed("summary", () => planSummary(plan)));
-  };
-  if (bySheet) tableOf();
-  else for (let y = 0; y < YEARS; y++) tableOf(2027 + y);
+  const plan = timed("table", () => planTable(cells, demand, services, routing, radio, installed));
+  const planRows = rowCount(plan);
+  const steps = rowCount(timed("expansion", () => planExpansion(plan, ladder)));
+  rowCount(timed("summary", () => planSummary(plan)));
   const seconds = Object.values(parts).reduce((sum, part) => sum + part, 0);
   const peakMB = process.resourceUsage().maxRSS / 1024;
   const detail = Object.entries(parts).map(([name, part]) => `${name} ${part.toFixed(2)}`);
   process.stdout.write(
     `${String(cellCount).padStart(7)} cells: ${planRows} rows, ${steps} steps, ${seconds.toFixed(2)} s ` +
-      `(${detail.join(", ")}), ${Math.round(planRows / seconds)} rows/s, peak ${Math.round(peakMB)} MB` +
-      `${bySheet ? "" : ", year by year"}\n`,
+      `(${detail.join(", ")}), ${Math.round(planRows / seconds)} rows/s, peak ${Math.round(peakMB)} MB\n`,
   );
   return { planRows, seconds };
 }

@@ -57,12 +57,27 @@ function efficiency(scheme: Scheme, direction: "down" | "up"): number {
  * @param scheme OFDMA
  * @param direction down or up
  */
-export function carrierMbps(scheme: Scheme, direction: "down" | "up"): number {
+function carrierMbps(scheme: Scheme, direction: "down" | "up"): number {
   const share = scheme.optional("downlinkTimeShare");
   const time = share === undefined ? 1 : direction === "down" ? share : 1 - share;
   const kHz = scheme.required("blocks") * scheme.required("blockBandwidthKHz");
   const usable = (1 - scheme.number("overheadShare", 0.25)) / scheme.number("clusterSize", 1);
   return (kHz * efficiency(scheme, direction) * usable * time) / KBPS_PER_MBPS;
+}
+
+/** User data rate of one carrier, kbit/s. */
+export interface CarrierKbps {
+  readonly down: number;
+  readonly up: number;
+}
+
+/**
+ * Both rates of one OFDMA carrier, which no load changes.
+ *
+ * @param scheme OFDMA
+ */
+export function carrierKbps(scheme: Scheme): CarrierKbps {
+  return { down: carrierMbps(scheme, "down") * KBPS_PER_MBPS, up: carrierMbps(scheme, "up") * KBPS_PER_MBPS };
 }
 
 /**
@@ -71,10 +86,10 @@ export function carrierMbps(scheme: Scheme, direction: "down" | "up"): number {
  *
  * @param scheme OFDMA
  * @param load offered load, whose rates give the unit
+ * @param capacity rates of one carrier
  */
-export function bearerUnits(scheme: Scheme, load: OfferedLoad): Units {
-  const capacity = { down: carrierMbps(scheme, "down") * KBPS_PER_MBPS, up: carrierMbps(scheme, "up") * KBPS_PER_MBPS };
-  const streams = [...load.lost, ...load.waiting];
+export function bearerUnits(scheme: Scheme, load: OfferedLoad, capacity: CarrierKbps): Units {
+  const streams = load.waiting.length === 0 ? load.lost : [...load.lost, ...load.waiting];
   for (const stream of streams) {
     if (rateOf(stream, "down") + rateOf(stream, "up") > 0) continue;
     const name = stream.service.service;
@@ -84,16 +99,25 @@ export function bearerUnits(scheme: Scheme, load: OfferedLoad): Units {
       `the rate of a call, which ${scheme.name} (OFDMA) needs`,
     );
   }
-  const filling = (direction: "down" | "up"): number =>
-    streams.reduce((sum, stream) => sum + stream.trafficE * rateOf(stream, direction), 0) / capacity[direction];
-  const tight = filling("up") > filling("down") ? "up" : "down";
-  const rates = streams.map((stream) => rateOf(stream, tight)).filter((kbps) => kbps > 0);
-  const unitKbps = rates.length > 0 ? Math.min(...rates) : capacity[tight] / UNITS_WITHOUT_CALLS;
+  let upE = 0;
+  let downE = 0;
+  for (const stream of streams) {
+    upE += stream.trafficE * rateOf(stream, "up");
+    downE += stream.trafficE * rateOf(stream, "down");
+  }
+  const tight = upE / capacity.up > downE / capacity.down ? "up" : "down";
+  let narrowest = Infinity;
+  for (const stream of streams) {
+    const kbps = rateOf(stream, tight);
+    if (kbps > 0 && kbps < narrowest) narrowest = kbps;
+  }
+  const unitKbps = narrowest < Infinity ? narrowest : capacity[tight] / UNITS_WITHOUT_CALLS;
   const perCarrier = capacity[tight] / unitKbps;
+  const width = (stream: CallStream): number => Math.max(1, wholeCovering(rateOf(stream, tight) / unitKbps));
   return {
     of: (carriers) => wholeWithin(carriers * perCarrier),
-    width: (stream) => Math.max(1, wholeCovering(rateOf(stream, tight) / unitKbps)),
-    waitingWidth: Math.max(1, ...load.waiting.map((stream) => wholeCovering(rateOf(stream, tight) / unitKbps))),
+    width,
+    waitingWidth: load.waiting.reduce((most, stream) => Math.max(most, width(stream)), 1),
     downMbps: capacity.down / perCarrier / KBPS_PER_MBPS,
     upMbps: capacity.up / perCarrier / KBPS_PER_MBPS,
     carriersFor: (units) => wholeCovering(units / perCarrier),

@@ -18,7 +18,7 @@ import * as range from "../radio/range";
 import * as shadowing from "../radio/shadowing";
 import type { Assessment } from "./assessment";
 import type { OfferedLoad } from "./offered";
-import type { Limit } from "./records";
+import type { Limit, ServiceRow } from "./records";
 import type { Scheme } from "./scheme";
 
 const KHZ_PER_MHZ = 1000;
@@ -35,11 +35,12 @@ export function radiusNeeded(areaKm2: number, sectors: number): number {
   return Math.sqrt((areaKm2 * sectors) / siteArea(1, sectors));
 }
 
-/** Path loss of a scheme in one environment, both ways, and where the model's validity ends. */
+/** Path loss of a scheme in one environment turned into distance, up to where the model's validity ends. */
 interface Propagation {
   readonly farthestKm: number;
+  /** Loss at the farthest distance. */
+  readonly farthestDb: number;
   range(lossDb: number): number;
-  loss(distanceKm: number): number;
 }
 
 type Numbers = readonly [frequencyMHz: number, baseHeightM: number, mobileHeightM: number];
@@ -65,7 +66,12 @@ function propagation(scheme: Scheme, environment: string): Propagation {
     word: string,
   ): Propagation => {
     const facts = numbers();
-    return { farthestKm, range: (db) => ranged(db, ...facts, word), loss: (km) => loss(km, ...facts, word) };
+    const [frequency, base, mobile] = facts;
+    return {
+      farthestKm,
+      farthestDb: loss(farthestKm, ...facts, word),
+      range: (db) => ranged(db, frequency, base, mobile, word),
+    };
   };
   switch (model) {
     case "hata":
@@ -82,8 +88,8 @@ function propagation(scheme: Scheme, environment: string): Propagation {
       const frequency = scheme.required("frequencyMHz");
       return {
         farthestKm: Infinity,
+        farthestDb: Infinity,
         range: (db) => range.freeSpace(db, frequency),
-        loss: (km) => pathLoss.freeSpace(km, frequency),
       };
     }
     default: {
@@ -91,8 +97,8 @@ function propagation(scheme: Scheme, environment: string): Propagation {
       const exponent = scheme.number("pathLossExponent", 3.5);
       return {
         farthestKm: Infinity,
+        farthestDb: Infinity,
         range: (db) => range.logDistance(db, reference, exponent),
-        loss: (km) => pathLoss.logDistance(km, reference, exponent),
       };
     }
   }
@@ -101,39 +107,97 @@ function propagation(scheme: Scheme, environment: string): Propagation {
 interface Receiver {
   readonly bandwidthMHz: number;
   readonly requiredSinrDb: number;
+  readonly sensitivityDbm: number;
 }
 
-/** Bandwidth of the noise and SINR required there, for the most demanding service of a direction. */
-function receiver(scheme: Scheme, load: OfferedLoad, direction: "up" | "down"): Receiver | undefined {
-  if (scheme.access === "CDMA") return codeReceiver(scheme, load, direction);
-  const requiredSinrDb = scheme.required("requiredSinrDb");
-  if (scheme.access !== "OFDMA") {
-    return { bandwidthMHz: scheme.required("channelSpacingKHz") / KHZ_PER_MHZ, requiredSinrDb };
+type Way = "up" | "down";
+
+/** One direction of the link; what no load changes is worked out once. */
+class Direction {
+  readonly by: "uplink range" | "downlink range";
+  /** Undefined where the table gives no power, so that the direction is not judged. */
+  readonly eirpDbm: number | undefined;
+  private readonly noiseFigureDb: number;
+  private readonly codeNeeds = new Map<ServiceRow, number>();
+  private kbpsPerBlock = NaN;
+  private latest: Receiver | undefined;
+
+  constructor(
+    private readonly scheme: Scheme,
+    readonly way: Way,
+  ) {
+    const baseFigure = scheme.number("noiseFigureDb", 5);
+    this.by = way === "up" ? "uplink range" : "downlink range";
+    this.eirpDbm = scheme.optional(way === "up" ? "uplinkEirpDbm" : "eirpDbm");
+    this.noiseFigureDb = way === "up" ? baseFigure : scheme.number("mobileNoiseFigureDb", baseFigure);
   }
-  const block = scheme.required("blockBandwidthKHz");
-  if (direction === "down") return { bandwidthMHz: (scheme.required("blocks") * block) / KHZ_PER_MHZ, requiredSinrDb };
-  // A mobile sends on as few blocks as its rate needs, so that its power is not spread.
-  const kbps = Math.max(0, ...streams(load).map(({ upKbps }) => (Number.isNaN(upKbps) ? 0 : upKbps)));
-  const perBlock = block * Math.log2(1 + 10 ** (requiredSinrDb / 10));
-  const blocks = Math.min(scheme.required("blocks"), Math.max(1, Math.ceil(kbps / perBlock)));
-  return { bandwidthMHz: (blocks * block) / KHZ_PER_MHZ, requiredSinrDb };
+
+  /** Bandwidth of the noise and SINR required there, for the most demanding service; undefined where none asks for anything. */
+  receiver(load: OfferedLoad): Receiver | undefined {
+    const { scheme } = this;
+    if (scheme.access === "CDMA") return this.codeReceiver(load);
+    if (scheme.access !== "OFDMA") {
+      this.latest ??= this.heard(scheme.required("channelSpacingKHz") / KHZ_PER_MHZ, scheme.required("requiredSinrDb"));
+      return this.latest;
+    }
+    if (this.way === "up") return this.blockReceiver(load);
+    this.latest ??= this.heard(
+      (scheme.required("blocks") * scheme.required("blockBandwidthKHz")) / KHZ_PER_MHZ,
+      scheme.required("requiredSinrDb"),
+    );
+    return this.latest;
+  }
+
+  /** A mobile sends on as few blocks as its rate needs, so that its power is not spread. */
+  private blockReceiver(load: OfferedLoad): Receiver {
+    const { scheme } = this;
+    const requiredSinrDb = scheme.required("requiredSinrDb");
+    const block = scheme.required("blockBandwidthKHz");
+    if (Number.isNaN(this.kbpsPerBlock)) this.kbpsPerBlock = block * Math.log2(1 + 10 ** (requiredSinrDb / 10));
+    let kbps = 0;
+    for (const { service } of load.lost) if (service.upKbps > kbps) kbps = service.upKbps;
+    for (const { service } of load.waiting) if (service.upKbps > kbps) kbps = service.upKbps;
+    if (load.dataService && load.dataService.upKbps > kbps) kbps = load.dataService.upKbps;
+    const blocks = Math.min(scheme.required("blocks"), Math.max(1, Math.ceil(kbps / this.kbpsPerBlock)));
+    return this.heard((blocks * block) / KHZ_PER_MHZ, requiredSinrDb);
+  }
+
+  private codeReceiver(load: OfferedLoad): Receiver | undefined {
+    const bandwidthMHz = this.scheme.required("chipRateMcps");
+    const services = streams(load);
+    const requiredSinrDb =
+      services.length > 0
+        ? Math.max(...services.map((service) => this.codeNeed(service, bandwidthMHz)))
+        : this.scheme.optional("requiredSinrDb");
+    return requiredSinrDb === undefined ? undefined : this.heard(bandwidthMHz, requiredSinrDb);
+  }
+
+  private codeNeed(service: ServiceRow, bandwidthMHz: number): number {
+    let need = this.codeNeeds.get(service);
+    if (need === undefined) {
+      const down = Number.isNaN(service.downlinkEbN0Db) ? service.ebN0Db : service.downlinkEbN0Db;
+      need =
+        this.way === "up"
+          ? sinr.fromEbN0(service.ebN0Db, bandwidthMHz, service.upKbps)
+          : sinr.fromEbN0(down, bandwidthMHz, service.downKbps);
+      this.codeNeeds.set(service, need);
+    }
+    return need;
+  }
+
+  /** Cells of a scheme mostly carry the same services, so the latest receiver is nearly always the one asked for. */
+  private heard(bandwidthMHz: number, requiredSinrDb: number): Receiver {
+    const { latest } = this;
+    if (latest?.bandwidthMHz === bandwidthMHz && latest.requiredSinrDb === requiredSinrDb) return latest;
+    const sensitivityDbm = link.sensitivity(noise.floor(bandwidthMHz, this.noiseFigureDb), requiredSinrDb);
+    this.latest = { bandwidthMHz, requiredSinrDb, sensitivityDbm };
+    return this.latest;
+  }
 }
 
-function streams(load: OfferedLoad): OfferedLoad["lost"][number]["service"][] {
+function streams(load: OfferedLoad): ServiceRow[] {
   const services = [...load.lost, ...load.waiting].map(({ service }) => service);
   return load.dataService ? [...services, load.dataService] : services;
-}
-
-/** Undefined where no service asks for anything. */
-function codeReceiver(scheme: Scheme, load: OfferedLoad, direction: "up" | "down"): Receiver | undefined {
-  const bandwidthMHz = scheme.required("chipRateMcps");
-  const needs = streams(load).map((service) => {
-    const kbps = direction === "up" ? service.upKbps : service.downKbps;
-    const down = Number.isNaN(service.downlinkEbN0Db) ? service.ebN0Db : service.downlinkEbN0Db;
-    return sinr.fromEbN0(direction === "up" ? service.ebN0Db : down, bandwidthMHz, kbps);
-  });
-  const requiredSinrDb = needs.length > 0 ? Math.max(...needs) : scheme.optional("requiredSinrDb");
-  return requiredSinrDb === undefined ? undefined : { bandwidthMHz, requiredSinrDb };
 }
 
 function shadowMargin(scheme: Scheme): number {
@@ -144,30 +208,12 @@ function shadowMargin(scheme: Scheme): number {
   return shadowing.margin(edge, deviationDb);
 }
 
-/** Margin for interference at the load; undefined where no power would help. */
-function interferenceMargin(scheme: Scheme, assessment: Assessment, requiredSinrDb: number): number | undefined {
-  if (scheme.access === "CDMA") {
-    const load = assessment.uplinkLoad ?? 1;
-    return load < 1 ? margin.fromLoad(load) : undefined;
-  }
-  const exponent = scheme.optional("pathLossExponent");
-  const cluster = scheme.optional("clusterSize");
-  if (exponent === undefined || cluster === undefined) return 0;
-  const edgeSirDb = reuse(cluster, exponent, scheme.number("sectors", 1), 1, undefined, "corner");
-  try {
-    return margin.neighbourLoad(requiredSinrDb, edgeSirDb, assessment.utilisation);
-  } catch (thrown) {
-    if (thrown instanceof NoAnswerError) return undefined;
-    throw thrown;
-  }
-}
-
 /**
  * Reach of one direction; undefined below the nearest distance of the model, and its farthest distance where the budget
  * would go beyond: a model is not stretched.
  */
 function reachOf(lossDb: number, model: Propagation): number | undefined {
-  if (Number.isFinite(model.farthestKm) && lossDb >= model.loss(model.farthestKm)) return model.farthestKm;
+  if (lossDb >= model.farthestDb) return model.farthestKm;
   try {
     return model.range(lossDb);
   } catch (thrown) {
@@ -183,6 +229,11 @@ export class Coverage {
   private readonly known = new Map<string, Propagation>();
   private readonly shadowDb: number;
   private readonly timingKm: number;
+  private readonly directions: readonly Direction[];
+  private readonly gainsDb: number;
+  private readonly lossesDb: number;
+  /** Signal to interference at the edge with every neighbour at full load; NaN until asked for. */
+  private edgeSirDb = NaN;
 
   constructor(private readonly scheme: Scheme) {
     this.shadowDb = shadowMargin(scheme);
@@ -191,6 +242,9 @@ export class Coverage {
       guard === undefined
         ? Infinity
         : timing.radius(guard, scheme.number("advanceSteps", 0), scheme.number("stepUs", 0));
+    this.directions = [new Direction(scheme, "up"), new Direction(scheme, "down")];
+    this.gainsDb = scheme.number("gainsDb", 0);
+    this.lossesDb = scheme.number("lossesDb", 0);
   }
 
   private ranged(environment: string): Propagation {
@@ -202,55 +256,54 @@ export class Coverage {
     return found;
   }
 
+  /** Margin for interference at the load; undefined where no power would help. */
+  private interferenceMargin(assessment: Assessment, requiredSinrDb: number): number | undefined {
+    const { scheme } = this;
+    if (scheme.access === "CDMA") {
+      const load = assessment.uplinkLoad ?? 1;
+      return load < 1 ? margin.fromLoad(load) : undefined;
+    }
+    if (Number.isNaN(this.edgeSirDb)) {
+      const exponent = scheme.optional("pathLossExponent");
+      const cluster = scheme.optional("clusterSize");
+      if (exponent === undefined || cluster === undefined) return 0;
+      this.edgeSirDb = reuse(cluster, exponent, scheme.number("sectors", 1), 1, undefined, "corner");
+    }
+    try {
+      return margin.neighbourLoad(requiredSinrDb, this.edgeSirDb, assessment.utilisation);
+    } catch (thrown) {
+      if (thrown instanceof NoAnswerError) return undefined;
+      throw thrown;
+    }
+  }
+
   /** Undefined where there is nothing to reach: no link budget, or no service that asks for anything. */
   reach(environment: string, load: OfferedLoad, assessment: Assessment): Reach | undefined {
-    const { scheme } = this;
-    const directions: {
-      by: "uplink range" | "downlink range";
-      eirp: number | undefined;
-      at: "up" | "down";
-      noiseFigure: number;
-    }[] = [
-      {
-        by: "uplink range",
-        at: "up",
-        eirp: scheme.optional("uplinkEirpDbm"),
-        noiseFigure: scheme.number("noiseFigureDb", 5),
-      },
-      {
-        by: "downlink range",
-        at: "down",
-        eirp: scheme.optional("eirpDbm"),
-        noiseFigure: scheme.number("mobileNoiseFigureDb", scheme.number("noiseFigureDb", 5)),
-      },
-    ];
     let radiusKm: number | undefined = this.timingKm;
     let by: Reach["by"] = "timing range";
     let interferenceMarginDb = 0;
     let judged = this.timingKm !== Infinity;
-    for (const { by: direction, at, eirp, noiseFigure } of directions) {
-      if (eirp === undefined) continue;
-      const wanted = receiver(scheme, load, at);
-      if (!wanted) continue;
-      const { bandwidthMHz, requiredSinrDb } = wanted;
+    for (const direction of this.directions) {
+      if (direction.eirpDbm === undefined) continue;
+      const receiver = direction.receiver(load);
+      if (!receiver) continue;
       judged = true;
-      const interference = interferenceMargin(scheme, assessment, requiredSinrDb);
-      if (interference === undefined) return { radiusKm: undefined, interferenceMarginDb, by: direction };
+      const interference = this.interferenceMargin(assessment, receiver.requiredSinrDb);
+      if (interference === undefined) return { radiusKm: undefined, interferenceMarginDb, by: direction.by };
       // CDMA's noise rise is that of the base station's receiver; its downlink is a matter of load.
-      const rise = scheme.access === "CDMA" && at === "down" ? 0 : interference;
+      const rise = this.scheme.access === "CDMA" && direction.way === "down" ? 0 : interference;
       interferenceMarginDb = Math.max(interferenceMarginDb, rise);
-      const sensitivity = link.sensitivity(noise.floor(bandwidthMHz, noiseFigure), requiredSinrDb);
       const lossDb = link.maxLoss(
-        eirp,
-        sensitivity,
-        scheme.number("gainsDb", 0),
-        scheme.number("lossesDb", 0),
+        direction.eirpDbm,
+        receiver.sensitivityDbm,
+        this.gainsDb,
+        this.lossesDb,
         this.shadowDb + rise,
       );
       const reached = reachOf(lossDb, this.ranged(environment));
       if (reached === undefined || radiusKm === undefined || reached < radiusKm) {
         radiusKm = reached;
-        by = direction;
+        by = direction.by;
         if (reached === undefined) break;
       }
     }

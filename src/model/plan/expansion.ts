@@ -296,7 +296,7 @@ function waysOf(
  * @param plan rows of the plan
  * @param ladder steps to choose from
  */
-export function expansion(plan: readonly NeedRow[], ladder: readonly LadderStep[]): ExpansionRow[] {
+export function expansion(plan: Iterable<NeedRow>, ladder: readonly LadderStep[]): ExpansionRow[] {
   for (const { step, requires } of ladder) {
     if (requires !== "" && !ladder.some((other) => other.step === requires)) {
       throw new DomainError(`ladder requires of ${step}`, requires, "a step of the ladder");

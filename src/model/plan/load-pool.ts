@@ -74,6 +74,22 @@ function loadsOf(service: ServiceRow, scheme: Scheme): Loads {
   return { up: up * rise, down };
 }
 
+/** Loads of the services of a scheme, each worked out once. */
+export class ServiceLoads {
+  private readonly known = new Map<ServiceRow, Loads>();
+
+  constructor(private readonly scheme: Scheme) {}
+
+  of(service: ServiceRow): Loads {
+    let loads = this.known.get(service);
+    if (!loads) {
+      loads = loadsOf(service, this.scheme);
+      this.known.set(service, loads);
+    }
+    return loads;
+  }
+}
+
 export class LoadPool implements Capacity {
   private readonly limit: number;
   private readonly downLimit: number;
@@ -93,6 +109,7 @@ export class LoadPool implements Capacity {
   constructor(
     scheme: Scheme,
     private readonly load: OfferedLoad,
+    serviceLoads: ServiceLoads,
   ) {
     if (load.waiting.length > 0) {
       const name = load.waiting[0]!.service.service;
@@ -112,7 +129,7 @@ export class LoadPool implements Capacity {
       );
     }
     this.otherCellRatio = scheme.required("otherCellRatio");
-    const calls = load.lost.map(({ service }) => loadsOf(service, scheme));
+    const calls = load.lost.map(({ service }) => serviceLoads.of(service));
     const lightest = calls.length > 0 ? Math.min(...calls.map(({ up }) => up)) : this.limit;
     this.usersPerCarrier = this.limit / lightest;
     // The lightest load itself may differ from its own quotient by a rounding.
@@ -125,7 +142,7 @@ export class LoadPool implements Capacity {
     this.callLoad = { up: sum("up"), down: sum("down") };
     const data = load.dataService;
     if (data && load.downMbps + load.upMbps > 0) {
-      const each = loadsOf(data, scheme);
+      const each = serviceLoads.of(data);
       const rates = ratesOf(data);
       const full = (direction: keyof Loads): number =>
         (rates[direction] * data.activity) / (each[direction] * KBPS_PER_MBPS);

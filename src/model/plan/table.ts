@@ -3,11 +3,11 @@ import { DomainError, NoAnswerError } from "../errors";
 import { smallestWhole } from "../numerics/root";
 import { carriersPerSector } from "../schemes/spectrum";
 import * as forecast from "../traffic/forecast";
-import type { Capacity } from "./assessment";
-import { bearerUnits, channelUnits } from "./carrier-units";
+import type { Assessment, Capacity } from "./assessment";
+import { bearerUnits, carrierKbps, channelUnits } from "./carrier-units";
 import { Coverage, radiusNeeded, type Reach } from "./coverage";
 import { demandOf, ServiceYears, type ServiceDemand } from "./demand";
-import { LoadPool } from "./load-pool";
+import { LoadPool, ServiceLoads } from "./load-pool";
 import { addLoad, emptyLoad, totalTraffic, type OfferedLoad } from "./offered";
 import type { CellRow, DemandRow, InstalledRow, Limit, PlanRow, RadioColumn, RoutingRow, ServiceRow } from "./records";
 import { Routing } from "./routing";
@@ -37,6 +37,7 @@ interface PlannedScheme {
   readonly coverage: Coverage;
   readonly sectors: number;
   readonly maximumCarriers: number;
+  capacityOf(load: OfferedLoad): Capacity;
 }
 
 function plannedScheme(name: string, column: RadioColumn): PlannedScheme {
@@ -46,6 +47,7 @@ function plannedScheme(name: string, column: RadioColumn): PlannedScheme {
     coverage: new Coverage(scheme),
     sectors: scheme.number("sectors", 1),
     maximumCarriers: maximum(scheme),
+    capacityOf: capacities(scheme),
   };
 }
 
@@ -66,17 +68,30 @@ function maximum(scheme: Scheme): number {
   );
 }
 
-function capacityOf(scheme: Scheme, load: OfferedLoad): Capacity {
-  if (scheme.access === "CDMA") return new LoadPool(scheme, load);
-  const units = scheme.access === "OFDMA" ? bearerUnits(scheme, load) : channelUnits(scheme);
-  return new UnitPool(units, load, waitingGroup(load.waiting, scheme));
+/** Capacity under a load; what no load changes is worked out once, for the first cell that carries the scheme. */
+function capacities(scheme: Scheme): (load: OfferedLoad) => Capacity {
+  if (scheme.access === "CDMA") {
+    const loads = new ServiceLoads(scheme);
+    return (load) => new LoadPool(scheme, load, loads);
+  }
+  if (scheme.access === "OFDMA") {
+    let carrier: ReturnType<typeof carrierKbps> | undefined;
+    return (load) => {
+      carrier ??= carrierKbps(scheme);
+      return new UnitPool(bearerUnits(scheme, load, carrier), load, waitingGroup(load.waiting, scheme));
+    };
+  }
+  let units: ReturnType<typeof channelUnits> | undefined;
+  return (load) => {
+    units ??= channelUnits(scheme);
+    return new UnitPool(units, load, waitingGroup(load.waiting, scheme));
+  };
 }
 
 /** Smallest number of carriers with which every promise is kept. */
-function carriersRequired(capacity: Capacity, load: OfferedLoad): number {
+function carriersRequired(assess: (carriers: number) => Assessment, guess: number, load: OfferedLoad): number {
   if (load.lost.length + load.waiting.length === 0 && load.downMbps + load.upMbps === 0) return 0;
-  const kept = (carriers: number): boolean => capacity.assess(carriers).limit === "nothing";
-  const found = smallestWhole(kept, 0, MOST_CARRIERS, capacity.guess);
+  const found = smallestWhole((carriers) => assess(carriers).limit === "nothing", 0, MOST_CARRIERS, guess);
   if (found === undefined) {
     throw new NoAnswerError(
       `More than ${MOST_CARRIERS} carriers would be needed in one cell; check demand and radio facts.`,
@@ -100,11 +115,11 @@ class InstalledCarriers {
   in(cell: string, scheme: string, year: number): number {
     const rows = this.rows.get(cell)?.get(scheme);
     if (!rows) return 0;
-    return rows.reduce(
-      (sum, { carriers, fromYear, toYear }) =>
-        (Number.isNaN(fromYear) || year >= fromYear) && (Number.isNaN(toYear) || year <= toYear) ? sum + carriers : sum,
-      0,
-    );
+    let sum = 0;
+    for (const { carriers, fromYear, toYear } of rows) {
+      if ((Number.isNaN(fromYear) || year >= fromYear) && (Number.isNaN(toYear) || year <= toYear)) sum += carriers;
+    }
+    return sum;
   }
 }
 
@@ -131,22 +146,35 @@ function checkInstalled({ cells, installed, radio }: PlanInputs): void {
   }
 }
 
-/** Services of one area and year with their demand and routes: computed once, shared by the area's cells. */
+/** One service on one scheme in a year, with its demand in the area at hand. */
 interface RoutedDemand {
   readonly service: ServiceRow;
-  readonly demand: ServiceDemand;
   readonly scheme: string;
   readonly share: number;
+  readonly demand: ServiceDemand;
+}
+
+/** The services that a scheme carries in an area and year: shared by the area's cells. */
+interface SchemeDemand {
+  readonly planned: PlannedScheme;
+  readonly routed: readonly RoutedDemand[];
+  /** Share of the area's users that these services stand for. */
+  readonly part: number;
+}
+
+/** Users by services and routes, as a weight; the sum over schemes gives the whole. */
+function weightOf(routed: readonly RoutedDemand[]): number {
+  return routed.reduce((sum, { service, share }) => sum + service.userShare * share, 0);
 }
 
 /**
- * The plan table.
+ * The rows of the plan, one after the other.
  *
  * @param inputs the six tables
  * @param year one year, or undefined for all of the forecast
  * @param percentile of the forecast; 0.5 is the forecast itself
  */
-export function planTable(inputs: PlanInputs, year?: number, percentile = MEDIAN): PlanRow[] {
+export function* planRows(inputs: PlanInputs, year?: number, percentile = MEDIAN): Generator<PlanRow, void> {
   const { cells, demand } = inputs;
   checkShares(cells);
   checkInstalled(inputs);
@@ -161,51 +189,63 @@ export function planTable(inputs: PlanInputs, year?: number, percentile = MEDIAN
     else cellsOf.set(cell.area, [cell]);
   }
   const firstYear = demand.reduce((first, row) => Math.min(first, row.year), Infinity);
-  const rows: PlanRow[] = [];
   for (const forecastRow of demand) {
     if (year !== undefined && forecastRow.year !== year) continue;
     const users = usersAt(forecastRow, forecastRow.year - firstYear, percentile);
-    const routed = services.in(forecastRow.year).flatMap((service): RoutedDemand[] => {
+    const routed: RoutedDemand[] = [];
+    for (const service of services.in(forecastRow.year)) {
       const found = demandOf(service, users);
-      return routing
-        .of(service.service, forecastRow.year)
-        .filter(({ share }) => share > 0)
-        .map(({ scheme, share }) => ({ service, demand: found, scheme, share }));
-    });
-    const weight = routed.reduce((sum, { service, share }) => sum + service.userShare * share, 0);
+      for (const { scheme, share } of routing.of(service.service, forecastRow.year)) {
+        if (share > 0) routed.push({ service, scheme, share, demand: found });
+      }
+    }
+    const weight = weightOf(routed);
     const cellsHere = cellsOf.get(forecastRow.area);
     if (!cellsHere) throw new DomainError("Demand area", forecastRow.area, "an area of the Cells table");
+    const carried = Array.from(schemes, ([name, planned]): SchemeDemand => {
+      const mine = routed.filter(({ scheme }) => scheme === name);
+      return { planned, routed: mine, part: weight > 0 ? weightOf(mine) : 0 };
+    });
     for (const cell of cellsHere) {
-      for (const [name, planned] of schemes) {
-        const mine = routed.filter(({ scheme }) => scheme === name);
-        const carriers = installed.in(cell.cell, name, forecastRow.year);
+      for (const { planned, routed: mine, part } of carried) {
+        const carriers = installed.in(cell.cell, planned.scheme.name, forecastRow.year);
         if (mine.length === 0 && carriers === 0) continue;
-        const part = mine.reduce((sum, { service, share }) => sum + service.userShare * share, 0);
-        rows.push({
-          ...planRow(cell, forecastRow.year, planned, mine, carriers),
-          users: weight > 0 ? (users * cell.shareOfArea * part) / weight : 0,
-        });
+        const share = weight > 0 ? (users * cell.shareOfArea * part) / weight : 0;
+        yield planRow(cell, forecastRow.year, planned, mine, carriers, share);
       }
     }
     for (const { scheme } of routed) {
       if (!schemes.has(scheme)) throw new DomainError("Routing scheme", scheme, "a scheme of the Radio table");
     }
   }
-  return rows;
+}
+
+/**
+ * The plan table, all rows at once.
+ *
+ * @param inputs the six tables
+ * @param year one year, or undefined for all of the forecast
+ * @param percentile of the forecast; 0.5 is the forecast itself
+ */
+export function planTable(inputs: PlanInputs, year?: number, percentile = MEDIAN): PlanRow[] {
+  return [...planRows(inputs, year, percentile)];
 }
 
 function planRow(
   cell: CellRow,
   year: number,
-  { scheme, coverage, sectors, maximumCarriers }: PlannedScheme,
+  { scheme, coverage, sectors, maximumCarriers, capacityOf }: PlannedScheme,
   routed: readonly RoutedDemand[],
   carriersInstalled: number,
-): Omit<PlanRow, "users"> {
+  users: number,
+): PlanRow {
   const load = emptyLoad();
   for (const { service, demand, share } of routed) addLoad(load, service, demand, share * cell.shareOfArea, scheme);
-  const capacity = capacityOf(scheme, load);
-  const required = carriersRequired(capacity, load);
+  const capacity = capacityOf(load);
   const state = capacity.assess(carriersInstalled);
+  // What is installed often is what is looked for, or one beside it.
+  const assess = (carriers: number): Assessment => (carriers === carriersInstalled ? state : capacity.assess(carriers));
+  const required = carriersRequired(assess, capacity.guess, load);
   const capacityMet = required <= carriersInstalled;
   const needed = radiusNeeded(cell.areaKm2, sectors);
   const reach = coverage.reach(cell.environment, load, state);
@@ -238,6 +278,7 @@ function planRow(
     limitedBy: limitedBy(capacityMet, required > maximumCarriers, state.limit, coverageMet, reach),
     spareShare: channels > 0 ? 1 - capacity.channelsRequired / channels : undefined,
     maximumCarriers: Number.isFinite(maximumCarriers) ? maximumCarriers : undefined,
+    users,
   };
 }
 
