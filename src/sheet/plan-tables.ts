@@ -1,7 +1,7 @@
 /** From the cells of a plan's tables to the model's rows and back. */
 import { changesBetween, ROUNDING, type ComparedPlan } from "../model/plan/changes";
 import { demandTable } from "../model/plan/demand";
-import { expansion, type LadderStep } from "../model/plan/expansion";
+import { expansionOf, type LadderStep } from "../model/plan/expansion";
 import type { NeedRow } from "../model/plan/expansion-needs";
 import type {
   CellRow,
@@ -149,10 +149,9 @@ function readRadio(cells: Cells): Map<string, RadioColumn> {
 /** PLAN.DEMAND on cells. */
 export function demandCells(demand: Cells, services: Cells): unknown[][] {
   const rows = demandTable(readDemand(demand), readServices(services));
-  return labelled(
-    ["area", "year", "service", "trafficE", "downMbps", "upMbps"],
-    rows.map((row) => [row.area, row.year, row.service, row.trafficE, row.downMbps, row.upMbps]),
-  );
+  const table: unknown[][] = [["area", "year", "service", "trafficE", "downMbps", "upMbps"]];
+  for (const row of rows) table.push([row.area, row.year, row.service, row.trafficE, row.downMbps, row.upMbps]);
+  return table;
 }
 
 type PlanCell = string | number | boolean | undefined;
@@ -326,7 +325,11 @@ export function expansionCells(planCells: Cells, ladderCells: Cells): unknown[][
     radiusNeededKm: radiusNeededKm[i]!,
     coverageMet: coverageMet(i),
   });
-  const steps = expansion(each(plan.count, rowAt), rowsOf<LadderStep>(readWhole(ladderCells, "Ladder", schema.LADDER, true), schema.LADDER));
+  const steps = expansionOf(
+    cell,
+    rowAt,
+    rowsOf<LadderStep>(readWhole(ladderCells, "Ladder", schema.LADDER, true), schema.LADDER),
+  );
   return labelled(
     ["cell", "step", "orderBy", "inServiceBy", "cost"],
     steps.map((row) => [row.cell, row.step, row.orderBy, row.inServiceBy, row.cost]),

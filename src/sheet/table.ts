@@ -113,19 +113,27 @@ export function readTable(cells: Cells, table: string, schema: Schema): TableRow
   const problems: Problem[] = [];
   const numbers = new Map<string, Float64Array>();
   const texts = new Map<string, string[]>();
+  const readers: ((cell: unknown, i: number, row: number) => void)[] = [];
+  const places: number[] = [];
   for (const [name, column] of Object.entries(schema)) {
     const at = found.get(name);
     if (column.kind === "number") {
       const values = new Float64Array(count).fill(column.fallback ?? NaN);
-      if (at !== undefined) readNumbers(cells, rowNumbers, at, name, column, values, problems);
+      if (at !== undefined) readers.push(numberReader(name, column, values, problems));
       numbers.set(name, values);
     } else {
       const values = new Array<string>(count).fill(column.fallback ?? "");
-      if (at !== undefined) readTexts(cells, rowNumbers, at, name, column, values, problems);
+      if (at !== undefined) readers.push(textReader(name, column, values, problems));
       texts.set(name, values);
     }
+    if (at !== undefined) places.push(at);
   }
-  problems.sort((a, b) => a.row - b.row);
+  // Row by row, since a long table is spread over memory by its rows.
+  for (let i = 0; i < count; i++) {
+    const row = rowNumbers[i]!;
+    const line = cells[row - 1]!;
+    for (let k = 0; k < readers.length; k++) readers[k]!(line[places[k]!], i, row);
+  }
   return {
     count,
     rowNumbers,
@@ -138,40 +146,32 @@ export function readTable(cells: Cells, table: string, schema: Schema): TableRow
 
 type NumberColumn = Extract<Column, { kind: "number" }>;
 
-function readNumbers(
-  cells: Cells,
-  rowNumbers: readonly number[],
-  at: number,
+function numberReader(
   name: string,
   column: NumberColumn,
   values: Float64Array,
   problems: Problem[],
-): void {
+): (cell: unknown, i: number, row: number) => void {
   const zeroIsMissing = column.zeroIsBlank === true || !contains(column.domain, 0);
-  rowNumbers.forEach((row, i) => {
-    const cell = cells[row - 1]![at];
+  return (cell, i, row) => {
     if (typeof cell === "number" && contains(column.domain, cell) && !(cell === 0 && zeroIsMissing)) values[i] = cell;
-    else if (isBlank(cell) || (cell === 0 && zeroIsMissing)) {
+    else if (cell === "" || isBlank(cell) || (cell === 0 && zeroIsMissing)) {
       if (!column.optional) problems.push({ row, column: name, message: `missing; allowed: ${allowedWords(column)}.` });
     } else {
       values[i] = NaN;
       problems.push({ row, column: name, message: `${shown(cell)} is not allowed; allowed: ${allowedWords(column)}.` });
     }
-  });
+  };
 }
 
-function readTexts(
-  cells: Cells,
-  rowNumbers: readonly number[],
-  at: number,
+function textReader(
   name: string,
   column: Exclude<Column, NumberColumn>,
   values: string[],
   problems: Problem[],
-): void {
+): (cell: unknown, i: number, row: number) => void {
   const words = column.kind === "choice" ? new Map(column.words.map((word) => [word.toLowerCase(), word])) : undefined;
-  rowNumbers.forEach((row, i) => {
-    const cell = cells[row - 1]![at];
+  return (cell, i, row) => {
     if (isBlank(cell) || cell === 0) {
       if (!column.optional) problems.push({ row, column: name, message: `missing; allowed: ${allowedWords(column)}.` });
       return;
@@ -182,7 +182,7 @@ function readTexts(
     if (value !== undefined) values[i] = value;
     else
       problems.push({ row, column: name, message: `${shown(cell)} is not allowed; allowed: ${allowedWords(column)}.` });
-  });
+  };
 }
 
 function shown(cell: unknown): string {

@@ -101,7 +101,12 @@ export interface DemandResult extends ServiceDemand {
  */
 export function demandTable(demand: readonly DemandRow[], services: readonly ServiceRow[]): DemandResult[] {
   const years = new ServiceYears(services);
-  return demand.flatMap(({ area, year, users }) =>
-    years.in(year).map((service) => ({ area, year, service: service.service, ...demandOf(service, users) })),
-  );
+  const rows: DemandResult[] = [];
+  for (const { area, year, users } of demand) {
+    for (const service of years.in(year)) {
+      const { trafficE, downMbps, upMbps } = demandOf(service, users);
+      rows.push({ area, year, service: service.service, trafficE, downMbps, upMbps });
+    }
+  }
+  return rows;
 }

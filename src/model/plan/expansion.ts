@@ -42,15 +42,30 @@ const MONTHS_PER_YEAR = 12;
 /** Weighs a year with an unmet target above any cost, so that as few as possible remain and then the cheapest way counts. */
 const UNMET = 1e15;
 
+/** What the steps of a state do to one scheme. */
+interface Effect {
+  readonly carriersAdded: number;
+  /** Of those, the carriers that come with spectrum of their own. */
+  readonly withSpectrum: number;
+  readonly parts: number;
+  readonly sites: number;
+  /** Scheme that takes over the users. */
+  readonly movedTo: string | undefined;
+}
+
 /** How often each step may be taken, as digits of a mixed-radix number: one number is one state. */
 interface States {
   readonly steps: readonly LadderStep[];
   readonly radix: readonly number[];
   readonly weight: readonly number[];
   readonly count: number;
+  /** Whether a state has the steps that must come before others. */
+  readonly allowed: readonly boolean[];
+  /** By scheme, what each state does to it. */
+  readonly effects: ReadonlyMap<string, readonly Effect[]>;
 }
 
-function statesOf(steps: readonly LadderStep[], radix: readonly number[], cell: string): States {
+function statesOf({ steps, schemes }: Group, radix: readonly number[], cell: string): States {
   const weight: number[] = [];
   let count = 1;
   for (const size of radix) {
@@ -64,62 +79,84 @@ function statesOf(steps: readonly LadderStep[], radix: readonly number[], cell: 
       `at most ${MOST_STATES} combinations; set maxTimes of the steps lower`,
     );
   }
-  return { steps, radix, weight, count };
+  const digits = { steps, radix, weight, count };
+  const every = Array.from({ length: count }, (_, state) => state);
+  return {
+    ...digits,
+    allowed: every.map((state) => ordered(digits, state)),
+    effects: new Map(Array.from(schemes, (scheme) => [scheme, every.map((state) => effectOf(digits, state, scheme))])),
+  };
 }
 
-function times(states: States, state: number, step: number): number {
-  return Math.floor(state / states.weight[step]!) % states.radix[step]!;
+type Digits = Pick<States, "steps" | "radix" | "weight" | "count">;
+
+function times(digits: Digits, state: number, step: number): number {
+  return Math.floor(state / digits.weight[step]!) % digits.radix[step]!;
 }
 
 /** Whether steps that must come before have come. */
-function ordered(states: States, state: number): boolean {
-  return states.steps.every((step, i) => {
-    if (step.requires === "" || times(states, state, i) === 0) return true;
-    const before = states.steps.findIndex((other) => other.step === step.requires);
-    return before >= 0 && times(states, state, before) > 0;
+function ordered(digits: Digits, state: number): boolean {
+  return digits.steps.every((step, i) => {
+    if (step.requires === "" || times(digits, state, i) === 0) return true;
+    const before = digits.steps.findIndex((other) => other.step === step.requires);
+    return before >= 0 && times(digits, state, before) > 0;
   });
+}
+
+function effectOf(digits: Digits, state: number, scheme: string): Effect {
+  let carriersAdded = 0;
+  let withSpectrum = 0;
+  let sectors = 0;
+  let sites = 0;
+  let movedTo: string | undefined;
+  digits.steps.forEach((step, i) => {
+    if (step.fromScheme !== scheme) return;
+    const taken = times(digits, state, i);
+    carriersAdded += step.carriersAdded * taken;
+    if (step.needsSpectrumMHz > 0) withSpectrum += step.carriersAdded * taken;
+    sectors += step.sectorsAdded * taken;
+    sites += step.sitesAdded * taken;
+    if (step.toScheme !== "" && taken > 0) movedTo ??= step.toScheme;
+  });
+  return { carriersAdded, withSpectrum, parts: 1 + sectors + sites, sites, movedTo };
+}
+
+/** Carriers missing with what the steps of a state do: what is licensed holds only so many, steps with spectrum go beyond. */
+function shortOf(row: NeedRow, carriers: number, { carriersAdded, withSpectrum, parts }: Effect): number {
+  const licensed = Number.isNaN(row.maximumCarriers) ? Infinity : Math.max(row.maximumCarriers, row.carriersInstalled);
+  const held = Math.min(row.carriersInstalled + carriersAdded - withSpectrum, licensed);
+  // Dividing the load never asks for more, so that it need not be worked out where all of it fits.
+  if (carriers - held - withSpectrum <= 0) return 0;
+  const needed = dividedCarriers(
+    carriers === row.carriersRequired ? row : { ...row, carriersRequired: carriers },
+    parts,
+  );
+  return needed - held - withSpectrum;
 }
 
 /** What is missing in a year with the steps of a state taken; undefined where nothing is. */
 function missing(states: States, state: number, rows: readonly NeedRow[]): string | undefined {
-  const sum = (scheme: string, what: "carriersAdded" | "sectorsAdded" | "sitesAdded"): number =>
-    states.steps.reduce(
-      (total, step, i) => (step.fromScheme === scheme ? total + step[what] * times(states, state, i) : total),
-      0,
-    );
-  const movedTo = (scheme: string): string | undefined =>
-    states.steps.find((step, i) => step.fromScheme === scheme && step.toScheme !== "" && times(states, state, i) > 0)
-      ?.toScheme;
   for (const row of rows) {
-    if (movedTo(row.scheme) !== undefined) continue;
+    const effect = states.effects.get(row.scheme)![state]!;
+    if (effect.movedTo !== undefined) continue;
     let carriers = row.carriersRequired;
     for (const other of rows) {
-      if (movedTo(other.scheme) !== row.scheme) continue;
+      if (other === row || states.effects.get(other.scheme)![state]!.movedTo !== row.scheme) continue;
       const together = carriersAfterMove(row, other);
       if (together === undefined)
         return `${row.scheme} serves nobody yet, so that what it needs for ${other.scheme} is unknown`;
       carriers += together - row.carriersRequired;
     }
-    const sites = sum(row.scheme, "sitesAdded");
-    const parts = 1 + sum(row.scheme, "sectorsAdded") + sites;
-    const needed = dividedCarriers({ ...row, carriersRequired: carriers }, parts);
-    // What is licensed holds only so many carriers; steps that bring spectrum of their own go beyond.
-    const added = sum(row.scheme, "carriersAdded");
-    const withSpectrum = states.steps.reduce(
-      (total, step, i) =>
-        step.fromScheme === row.scheme && step.needsSpectrumMHz > 0
-          ? total + step.carriersAdded * times(states, state, i)
-          : total,
-      0,
-    );
-    const licensed = Number.isNaN(row.maximumCarriers)
-      ? Infinity
-      : Math.max(row.maximumCarriers, row.carriersInstalled);
-    const short = needed - Math.min(row.carriersInstalled + added - withSpectrum, licensed) - withSpectrum;
+    const short = shortOf(row, carriers, effect);
     if (short > 0) return `${row.scheme} lacks ${short} carriers in ${row.year}`;
-    if (!coveredWith(row, sites)) return `${row.scheme} lacks reach in ${row.year}`;
+    if (!coveredWith(row, effect.sites)) return `${row.scheme} lacks reach in ${row.year}`;
   }
   return undefined;
+}
+
+/** Whether a row falls short of its promises without any step. */
+function fallsShort(row: NeedRow): boolean {
+  return row.carriersRequired > row.carriersInstalled || !coveredWith(row, 0);
 }
 
 /** Schemes of a cell that steps tie together, with the steps; groups are searched one by one. */
@@ -208,86 +245,127 @@ interface Way {
 }
 
 /** The cheapest way for one group of schemes of a cell. */
-function cheapestWay(cell: string, group: Group, plan: readonly (readonly NeedRow[])[]): Way {
+function cheapestWay(cell: string, group: Group, plan: readonly (readonly NeedRow[])[], known: KnownStates): Way {
   const { steps } = group;
   const byYear = plan
     .map((rows) => rows.filter(({ scheme }) => group.schemes.has(scheme)))
     .filter((rows) => rows.length > 0);
-  const states = statesOf(steps, radixOf(group, byYear.flat()), cell);
+  const states = known.of(group, radixOf(group, byYear.flat()), cell);
+  const { count, weight, allowed } = states;
   const lastYear = byYear[byYear.length - 1]![0]!.year;
-  const allowed = Array.from({ length: states.count }, (_, state) => ordered(states, state));
-  let cost = new Float64Array(states.count).fill(Infinity);
+  const cost = new Float64Array(count).fill(Infinity);
   cost[0] = 0;
-  /** Step by which a state was reached in a year, -1 where it was carried over. */
-  const arrivals: Int16Array[] = [];
-  const years: number[] = [];
-  for (const rows of byYear) {
-    const year = rows[0]!.year;
-    const next = Float64Array.from(cost);
-    const arrival = new Int16Array(states.count).fill(-1);
-    for (let state = 0; state < states.count; state++) {
+  /** By year and state, the step by which a state was reached, -1 where it was carried over. */
+  const arrivals = new Int16Array(count * byYear.length).fill(-1);
+  for (let y = 0; y < byYear.length; y++) {
+    const rows = byYear[y]!;
+    const yearsLeft = lastYear - rows[0]!.year + 1;
+    for (let state = 0; state < count; state++) {
       for (let i = 0; i < steps.length; i++) {
         if (times(states, state, i) === 0) continue;
         const step = steps[i]!;
-        const reached = next[state - states.weight[i]!]! + step.cost + step.costPerYear * (lastYear - year + 1);
-        if (reached < next[state]!) {
-          next[state] = reached;
-          arrival[state] = i;
+        const reached = cost[state - weight[i]!]! + step.cost + step.costPerYear * yearsLeft;
+        if (reached < cost[state]!) {
+          cost[state] = reached;
+          arrivals[y * count + state] = i;
         }
       }
     }
-    for (let state = 0; state < states.count; state++) {
-      if (next[state] === Infinity) continue;
-      if (!allowed[state]) next[state] = Infinity;
-      else if (missing(states, state, rows) !== undefined) next[state]! += UNMET;
+    for (let state = 0; state < count; state++) {
+      if (cost[state] === Infinity) continue;
+      if (!allowed[state]) cost[state] = Infinity;
+      else if (missing(states, state, rows) !== undefined) cost[state]! += UNMET;
     }
-    arrivals.push(arrival);
-    years.push(year);
-    cost = next;
   }
-  return trace(states, cost, arrivals, years, byYear);
+  return trace(states, cost, arrivals, byYear);
 }
 
 /** The steps that led to the cheapest state, first year first, and what they leave unmet. */
-function trace(
-  states: States,
-  cost: Float64Array,
-  arrivals: readonly Int16Array[],
-  years: readonly number[],
-  byYear: readonly (readonly NeedRow[])[],
-): Way {
+function trace(states: States, cost: Float64Array, arrivals: Int16Array, byYear: readonly (readonly NeedRow[])[]): Way {
   let state = cost.reduce((best, value, i) => (value < cost[best]! ? i : best), 0);
   const taken: Taken[] = [];
   let reason: string | undefined;
-  for (let y = arrivals.length - 1; y >= 0; y--) {
+  for (let y = byYear.length - 1; y >= 0; y--) {
+    const arrival = (): number => arrivals[y * states.count + state]!;
     // Going backwards, the last reason found is that of the first year.
     reason = missing(states, state, byYear[y]!) ?? reason;
-    for (let by = arrivals[y]![state]!; by >= 0; by = arrivals[y]![state]!) {
-      taken.push({ step: states.steps[by]!, year: years[y]! });
+    for (let by = arrival(); by >= 0; by = arrival()) {
+      taken.push({ step: states.steps[by]!, year: byYear[y]![0]!.year });
       state -= states.weight[by]!;
     }
   }
   return { taken: taken.reverse(), reason };
 }
 
+/** Cells with as many states as this in all are remembered; beyond, a ladder is so rich that its cells differ anyway. */
+const MOST_REMEMBERED = 1_000_000;
+
+/** Groups and states that many cells of a plan share, since the same ladder stands before all of them. */
+class KnownStates {
+  private readonly groups = new Map<string, Group[]>();
+  private readonly states = new Map<Group, Map<string, States>>();
+  private remembered = 0;
+
+  constructor(private readonly ladder: readonly LadderStep[]) {}
+
+  groupsOf(present: ReadonlySet<string>, short: ReadonlySet<string>): readonly Group[] {
+    const key = JSON.stringify([[...present], [...short]]);
+    let groups = this.groups.get(key);
+    if (!groups) {
+      groups = usefulGroups(this.ladder, present, short);
+      this.groups.set(key, groups);
+    }
+    return groups;
+  }
+
+  of(group: Group, radix: readonly number[], cell: string): States {
+    let ofGroup = this.states.get(group);
+    if (!ofGroup) {
+      ofGroup = new Map();
+      this.states.set(group, ofGroup);
+    }
+    const key = radix.join();
+    let states = ofGroup.get(key);
+    if (!states) {
+      states = statesOf(group, radix, cell);
+      this.remembered += states.count * group.schemes.size;
+      if (this.remembered <= MOST_REMEMBERED) ofGroup.set(key, states);
+    }
+    return states;
+  }
+}
+
 /** The cheapest ways of all groups of a cell, first year first. */
 function waysOf(
   cell: string,
-  ladder: readonly LadderStep[],
   byYear: readonly (readonly NeedRow[])[],
+  known: KnownStates,
 ): { taken: Taken[]; reasons: string[] } {
-  const none = statesOf([], [], cell);
   const short = new Set<string>();
+  const present = new Set<string>();
   for (const rows of byYear) {
-    for (const row of rows) if (missing(none, 0, [row]) !== undefined) short.add(row.scheme);
+    for (const row of rows) {
+      present.add(row.scheme);
+      if (fallsShort(row)) short.add(row.scheme);
+    }
   }
   if (short.size === 0) return { taken: [], reasons: [] };
-  const present = new Set(byYear.flatMap((rows) => rows.map(({ scheme }) => scheme)));
-  const ways = usefulGroups(ladder, present, short).map((group) => cheapestWay(cell, group, byYear));
+  const ways = known.groupsOf(present, short).map((group) => cheapestWay(cell, group, byYear, known));
   return {
     taken: ways.flatMap(({ taken }) => taken).sort((a, b) => a.year - b.year),
     reasons: ways.flatMap(({ reason }) => (reason === undefined ? [] : [reason])),
   };
+}
+
+/** The rows of a cell by year, first year first. */
+function yearsOf(rows: readonly NeedRow[]): NeedRow[][] {
+  const years = new Map<number, NeedRow[]>();
+  for (const row of rows) {
+    const same = years.get(row.year);
+    if (same) same.push(row);
+    else years.set(row.year, [row]);
+  }
+  return [...years.values()].sort(([a], [b]) => a!.year - b!.year);
 }
 
 /**
@@ -296,28 +374,43 @@ function waysOf(
  * @param plan rows of the plan
  * @param ladder steps to choose from
  */
-export function expansion(plan: Iterable<NeedRow>, ladder: readonly LadderStep[]): ExpansionRow[] {
+export function expansion(plan: readonly NeedRow[], ladder: readonly LadderStep[]): ExpansionRow[] {
+  return expansionOf(
+    plan.map(({ cell }) => cell),
+    (i) => plan[i]!,
+    ladder,
+  );
+}
+
+/**
+ * As `expansion`, for a plan whose rows are made as a cell's turn comes.
+ *
+ * @param cellOf cell of each row of the plan
+ * @param rowAt row of the plan by its number
+ * @param ladder steps to choose from
+ */
+export function expansionOf(
+  cellOf: readonly string[],
+  rowAt: (i: number) => NeedRow,
+  ladder: readonly LadderStep[],
+): ExpansionRow[] {
   for (const { step, requires } of ladder) {
     if (requires !== "" && !ladder.some((other) => other.step === requires)) {
       throw new DomainError(`ladder requires of ${step}`, requires, "a step of the ladder");
     }
   }
-  const cells = new Map<string, Map<number, NeedRow[]>>();
-  for (const row of plan) {
-    let years = cells.get(row.cell);
-    if (!years) {
-      years = new Map();
-      cells.set(row.cell, years);
-    }
-    const rows = years.get(row.year);
-    if (rows) rows.push(row);
-    else years.set(row.year, [row]);
-  }
+  const cells = new Map<string, number[]>();
+  cellOf.forEach((cell, i) => {
+    const rows = cells.get(cell);
+    if (rows) rows.push(i);
+    else cells.set(cell, [i]);
+  });
+  const known = new KnownStates(ladder);
   const result: ExpansionRow[] = [];
-  for (const [cell, years] of cells) {
-    const byYear = [...years].sort(([a], [b]) => a - b).map(([, rows]) => rows);
+  for (const [cell, places] of cells) {
+    const byYear = yearsOf(places.map(rowAt));
     const lastYear = byYear[byYear.length - 1]![0]!.year;
-    const { taken, reasons } = waysOf(cell, ladder, byYear);
+    const { taken, reasons } = waysOf(cell, byYear, known);
     for (const { step, year } of taken) {
       result.push({
         cell,

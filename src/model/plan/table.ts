@@ -37,7 +37,7 @@ interface PlannedScheme {
   readonly coverage: Coverage;
   readonly sectors: number;
   readonly maximumCarriers: number;
-  capacityOf(load: OfferedLoad): Capacity;
+  readonly capacityOf: (load: OfferedLoad) => Capacity;
 }
 
 function plannedScheme(name: string, column: RadioColumn): PlannedScheme {

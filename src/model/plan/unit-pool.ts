@@ -69,7 +69,16 @@ export class UnitPool implements Capacity {
     const enough = (units: number): boolean => this.dataFits(units);
     const least = calls + this.waitingUnits;
     if (enough(least)) return least;
-    return smallestWhole(enough, least, MOST_UNITS, least) ?? MOST_UNITS + 1;
+    return smallestWhole(enough, least, MOST_UNITS, this.unitsWithData()) ?? MOST_UNITS + 1;
+  }
+
+  /** Units at which data would have its rate if no call were blocked: where the search for them starts. */
+  private unitsWithData(): number {
+    const { downMbps, upMbps, targetMbps } = this.load;
+    const down = downMbps > 0 ? (downMbps + targetMbps) / this.units.downMbps : 0;
+    const up = upMbps > 0 ? (upMbps + targetMbps) / this.units.upMbps : 0;
+    const calls = this.trafficE.reduce((sum, traffic, i) => sum + traffic * this.widths[i]!, 0);
+    return Math.ceil(calls + this.waiting.trafficE * this.units.waitingWidth + Math.max(down, up));
   }
 
   private callUnits(): number {
