@@ -35,9 +35,9 @@ export function steps({ manifest, id, namespace, copiedTo }) {
       `To remove it: reg delete "${WINDOWS_KEY}" /v ${id} /f`,
     ]),
     ...section("Excel on a Mac", [
-      copiedTo === undefined ? `mkdir -p "${folder}" && cp "${manifest}" "${folder}/${id}.xml"` : `Done: ${copiedTo}`,
+      copiedTo === undefined ? `mkdir -p ${folder} && cp "${manifest}" ${folder}/${id}.xml` : `Done: ${copiedTo}`,
       "Restart Excel; Home, Add-ins, and choose it under Developer Add-ins.",
-      `To remove it: rm "${folder}/${id}.xml"`,
+      `To remove it: rm ${folder}/${id}.xml`,
     ]),
     ...section("Excel in a browser", [
       `Home, Add-ins, More Add-ins, My Add-ins, Upload My Add-in, and choose ${manifest}`,

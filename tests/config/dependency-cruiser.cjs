@@ -19,6 +19,19 @@ module.exports = {
       "src/model|src/sheet|src/workbook|functions|src/command",
       "An entry point imports no other entry point.",
     ),
+    only(
+      "src/pane",
+      "src/model|src/sheet|src/workbook|src/pane",
+      "The pane takes the functions from the page, where functions.js put them, and knows no other entry point.",
+    ),
+    only("src/server", "src/server", "The server hands out built files and knows nothing of what is in them."),
+    {
+      name: "one-door-to-office-js",
+      comment: "Only the adapter and the entry point know the spreadsheet program behind the pane.",
+      severity: "error",
+      from: { path: "^src/", pathNot: "^src/(pane/workbook/office-workbook|pane/entry)\\.ts$" },
+      to: { path: "^src/pane/workbook/office-workbook\\.ts$" },
+    },
     {
       name: "model-has-no-packages",
       severity: "error",

@@ -242,7 +242,7 @@ describe("certificate", () => {
     const place = mkdtempSync(join(tmpdir(), "certificate-"));
     const paths = ["ca.crt", "localhost.crt", "localhost.key"].map((name) => join(place, name));
     jest.spyOn(console, "log").mockImplementation(() => undefined);
-    await generateCertificates(paths[0]!, paths[1]!, paths[2]!, 1, ["localhost", "127.0.0.1"]);
+    await generateCertificates(paths[0], paths[1], paths[2], 1, ["localhost", "127.0.0.1"]);
     const { readFileSync } = await import("node:fs");
     const encrypted = await startServer(folder, "127.0.0.1", 0, {
       cert: readFileSync(paths[1]!),

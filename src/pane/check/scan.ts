@@ -2,7 +2,7 @@
 import { say, texts } from "../say";
 import { stopIfAsked, type Work } from "../work";
 import { contains, placeText } from "../workbook/address";
-import type { OpenWorkbook, Place } from "../workbook/workbook";
+import type { Area, OpenWorkbook, Place } from "../workbook/workbook";
 import { isExternal, referencedAreas } from "./references";
 
 export interface ErrorCell {
@@ -117,33 +117,60 @@ async function rootsOf(book: OpenWorkbook, errors: readonly ErrorCell[]): Promis
     .map((error) => ({ ...error, spilled: 0, passedOn: 0, ...origins.get(error) }));
 }
 
-/** Where an error comes from, if a cell that its formula refers to shows the same one. */
-function sourcesOf(errors: readonly ErrorCell[]): (error: ErrorCell) => ErrorCell | undefined {
-  const bySheet = new Map<string, ErrorCell[]>();
+/** Small areas are looked through cell by cell, large ones error by error. */
+const SMALL_AREA = 500;
+
+/** Finds an error of a code within an area. */
+function errorFinder(errors: readonly ErrorCell[]): (area: Area, code: string) => ErrorCell | undefined {
+  const bySheet = new Map<string, Map<string, ErrorCell>>();
   for (const error of errors) {
-    const list = bySheet.get(error.place.sheet.toLowerCase());
-    if (list) list.push(error);
-    else bySheet.set(error.place.sheet.toLowerCase(), [error]);
+    const name = error.place.sheet.toLowerCase();
+    const cells = bySheet.get(name) ?? new Map<string, ErrorCell>();
+    bySheet.set(name, cells);
+    cells.set(`${error.place.row},${error.place.column}`, error);
   }
-  const direct = (error: ErrorCell): ErrorCell | undefined => {
-    if (error.formula === undefined) return undefined;
-    for (const area of referencedAreas(error.formula, error.place.sheet)) {
-      const found = bySheet.get(area.sheet.toLowerCase())?.find((other) => {
-        const there = { ...other.place, sheet: area.sheet };
-        return other !== error && other.code === error.code && contains(area, there);
-      });
-      if (found) return found;
+  return (area, code) => {
+    const cells = bySheet.get(area.sheet.toLowerCase());
+    if (!cells) return undefined;
+    if (area.rows * area.columns > SMALL_AREA) {
+      for (const error of cells.values())
+        if (error.code === code && contains(area, { ...error.place, sheet: area.sheet })) return error;
+      return undefined;
+    }
+    for (let row = area.row; row < area.row + area.rows; row++) {
+      for (let column = area.column; column < area.column + area.columns; column++) {
+        const error = cells.get(`${row},${column}`);
+        if (error?.code === code) return error;
+      }
     }
     return undefined;
   };
+}
+
+/** Where an error comes from, if a cell that its formula refers to shows the same one. */
+function sourcesOf(errors: readonly ErrorCell[]): (error: ErrorCell) => ErrorCell | undefined {
+  const find = errorFinder(errors);
+  const known = new Map<ErrorCell, ErrorCell | undefined>();
+  const direct = (error: ErrorCell): ErrorCell | undefined => {
+    if (error.formula === undefined) return undefined;
+    if (!known.has(error)) {
+      const areas = referencedAreas(error.formula, error.place.sheet);
+      known.set(
+        error,
+        areas.map((area) => find(area, error.code)).find((found) => found !== undefined),
+      );
+    }
+    return known.get(error);
+  };
   return (error) => {
-    const seen = new Set([error]);
-    let source = direct(error);
-    for (let next = source; next && !seen.has(next); next = direct(next)) {
+    const seen = new Set<ErrorCell>();
+    let source: ErrorCell | undefined;
+    for (let next = direct(error); next && !seen.has(next); next = direct(next)) {
+      // Cells that refer to each other in a circle have no other origin.
+      if (next === error) return undefined;
       seen.add(next);
       source = next;
     }
-    // Errors that refer to each other in a circle begin nowhere else.
-    return source === error ? undefined : source;
+    return source;
   };
 }

@@ -52,9 +52,11 @@ function spelledOut(name: string): string {
   return name.replace(/([a-z\d])([A-Z])/g, "$1 $2");
 }
 
-interface Entry {
-  readonly text: FunctionText;
-  readonly parts: readonly { readonly weight: number; readonly words: readonly string[]; readonly line: string }[];
+/** A part of a function's texts as words with blanks between and around, for finding phrases. */
+interface Line {
+  readonly entry: number;
+  readonly weight: number;
+  readonly words: string;
 }
 
 /** How well a word of a question fits a word of a text, 0 to 1. */
@@ -63,7 +65,8 @@ function fit(asked: string, word: string): number {
   if (asked.length >= SHORTEST_BEGINNING && word.startsWith(asked)) return BEGINNING;
   if (asked.length < SHORTEST_MISSPELT || word.length < SHORTEST_MISSPELT) return 0;
   const slips = asked.length >= LONG_WORD ? 2 : 1;
-  if (editDistance(asked, word, slips) <= slips) return MISSPELT;
+  // First letters are rarely wrong, and comparing words that share none would cost the most.
+  if (asked[0] === word[0] && editDistance(asked, word, slips) <= slips) return MISSPELT;
   return asked.startsWith(word) ? ENDING_MORE : 0;
 }
 
@@ -72,53 +75,66 @@ interface Term {
   readonly phrases: readonly { readonly words: readonly string[]; readonly worth: number }[];
 }
 
-function phraseFit(words: readonly string[], part: Entry["parts"][number]): number {
-  if (words.length === 1) return part.words.reduce((best, word) => Math.max(best, fit(words[0]!, word)), 0);
-  return ` ${part.line} `.includes(` ${words.join(" ")} `) ? EXACT : 0;
-}
-
-function termFit(term: Term, entry: Entry): number {
-  let best = 0;
-  for (const part of entry.parts) {
-    for (const { words, worth } of term.phrases) {
-      const value = part.weight * worth;
-      if (value > best) best = Math.max(best, value * phraseFit(words, part));
-    }
-  }
-  return best;
-}
-
 export class FunctionSearch {
-  private readonly entries: readonly Entry[];
+  private readonly lines: Line[] = [];
+  /** For each word the weight of the best part that has it, by function. */
+  private readonly weightsOf = new Map<string, Map<number, number>>();
   private readonly stopWords: ReadonlySet<string>;
   private readonly groups: readonly (readonly (readonly string[])[])[];
 
   constructor(
-    texts: readonly FunctionText[],
+    private readonly texts: readonly FunctionText[],
     private readonly language: Language,
   ) {
     this.stopWords = new Set(language.stopWords);
     this.groups = language.synonyms.map((group) => group.map(wordsOf));
-    this.entries = texts.map((text) => {
-      const parts: Record<Part, string> = {
-        id: text.id.replace(/\./g, " ").replace(/^ERLANG([BC])\b/, "ERLANG$1 ERLANG $1"),
-        asked: language.questions.flatMap(({ ask, functions }) => (functions.includes(text.id) ? [ask] : [])).join(" "),
-        description: text.description,
-        about: language.subjects[text.id.split(".")[0]!] ?? "",
-        parameters: text.parameters.map((parameter) => `${spelledOut(parameter.name)} ${parameter.text}`).join(" "),
-        returns: text.returns,
-        method: text.method,
-        assumes: text.assumes,
-        source: text.source,
-      };
-      return {
-        text,
-        parts: Object.entries(parts).map(([name, content]) => {
-          const words = wordsOf(content);
-          return { weight: WEIGHTS[name as Part], words, line: words.join(" ") };
-        }),
-      };
+    texts.forEach((text, entry) => {
+      for (const [part, content] of Object.entries(this.partsOf(text))) {
+        const words = wordsOf(content);
+        const weight = WEIGHTS[part as Part];
+        this.lines.push({ entry, weight, words: ` ${words.join(" ")} ` });
+        for (const word of words) this.note(word, entry, weight);
+      }
     });
+  }
+
+  private partsOf(text: FunctionText): Record<Part, string> {
+    const { questions, subjects } = this.language;
+    return {
+      id: text.id.replace(/\./g, " ").replace(/^ERLANG([BC])\b/, "ERLANG$1 ERLANG $1"),
+      asked: questions.flatMap(({ ask, functions }) => (functions.includes(text.id) ? [ask] : [])).join(" "),
+      description: text.description,
+      about: subjects[text.id.split(".")[0]!] ?? "",
+      parameters: text.parameters.map((parameter) => `${spelledOut(parameter.name)} ${parameter.text}`).join(" "),
+      returns: text.returns,
+      method: text.method,
+      assumes: text.assumes,
+      source: text.source,
+    };
+  }
+
+  private note(word: string, entry: number, weight: number): void {
+    const weights = this.weightsOf.get(word) ?? new Map<number, number>();
+    this.weightsOf.set(word, weights);
+    weights.set(entry, Math.max(weight, weights.get(entry) ?? 0));
+  }
+
+  /** How well each function fits a term. */
+  private fitsOf({ phrases }: Term): Float64Array {
+    const fits = new Float64Array(this.texts.length);
+    const raise = (entry: number, value: number): void => void (fits[entry] = Math.max(fits[entry]!, value));
+    for (const { words, worth } of phrases) {
+      if (words.length > 1) {
+        const phrase = ` ${words.join(" ")} `;
+        for (const line of this.lines) if (line.words.includes(phrase)) raise(line.entry, worth * line.weight);
+        continue;
+      }
+      for (const [word, weights] of this.weightsOf) {
+        const value = worth * fit(words[0]!, word);
+        if (value > 0) for (const [entry, weight] of weights) raise(entry, value * weight);
+      }
+    }
+    return fits;
   }
 
   /** What a question asks for: phrases of a known meaning first, then the words that remain. */
@@ -145,23 +161,23 @@ export class FunctionSearch {
     const upper = question.trim().toUpperCase();
     const typed = upper.replace(/^=?(CAP(DEV)?\.)?/, "");
     const asked = this.language.questions.find(({ ask }) => ask.toUpperCase() === typed);
-    const first = asked?.functions.flatMap((id) => this.entries.find(({ text }) => text.id === id)?.text ?? []) ?? [];
+    const first = asked?.functions.flatMap((id) => this.texts.find((text) => text.id === id) ?? []) ?? [];
     const isName = typed !== "" && (typed !== upper || /^[A-Z]+\.[A-Z]*$/.test(typed));
-    const named = isName ? this.entries.filter(({ text }) => text.id.startsWith(typed)) : [];
-    if (named.length > 0) return named.map(({ text }) => text);
+    const named = isName ? this.texts.filter(({ id }) => id.startsWith(typed)) : [];
+    if (named.length > 0) return named;
     const terms = this.termsOf(question);
     if (terms.length === 0) return [];
-    const fits = terms.map((term) => this.entries.map((entry) => termFit(term, entry)));
+    const fits = terms.map((term) => this.fitsOf(term));
     // A term that few functions know says more than one that all of them know.
     const rarity = fits.map((column) => {
       const sum = column.reduce((total, value) => total + Math.min(1, value / WEIGHTS.about), 0);
-      return Math.log(1 + this.entries.length / (1 + sum));
+      return Math.log(1 + this.texts.length / (1 + sum));
     });
-    const ranked = this.entries
-      .map((entry, i) => {
+    const ranked = this.texts
+      .map((text, i) => {
         const known = fits.filter((column) => column[i]! > 0).length;
         const score = fits.reduce((sum, column, t) => sum + column[i]! * rarity[t]!, 0);
-        return { text: entry.text, order: i, score: score * (known / terms.length) ** 2 };
+        return { text, order: i, score: score * (known / terms.length) ** 2 };
       })
       .filter(({ score }) => score > 0)
       .sort((a, b) => b.score - a.score || a.order - b.order)
@@ -171,12 +187,12 @@ export class FunctionSearch {
 
   /** Functions of one subject, in their own order. */
   ofSubject(subject: string): FunctionText[] {
-    return this.entries.flatMap(({ text }) => (text.id.startsWith(`${subject}.`) ? [text] : []));
+    return this.texts.filter(({ id }) => id.startsWith(`${subject}.`));
   }
 
   /** Subjects in the order of what they are about. */
   subjects(): string[] {
-    const present = new Set(this.entries.map(({ text }) => text.id.split(".")[0]!));
+    const present = new Set(this.texts.map(({ id }) => id.split(".")[0]!));
     const known = Object.keys(this.language.subjects).filter((subject) => present.has(subject));
     return [...known, ...[...present].filter((subject) => !known.includes(subject)).sort()];
   }

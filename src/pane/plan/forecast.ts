@@ -36,6 +36,8 @@ export interface Outcome {
   readonly changes: readonly (readonly unknown[])[];
   readonly rows: number;
   readonly verdicts: number;
+  /** False where no plan was there before to compare with. */
+  readonly compared: boolean;
   /** What the plan shows where it should stand, if not a plan. */
   readonly error: string | undefined;
 }
@@ -121,6 +123,7 @@ async function writeChanges(
 export async function loadForecast(book: OpenWorkbook, prepared: Prepared, work: Work): Promise<Outcome> {
   const { table, edit } = prepared;
   work.progress(texts.plan.forecastReading);
+  await untilCalculated(book, work, () => Promise.resolve(true), texts.work.nothingChanged);
   const before = await findPlan(book, work);
   if (!before) throw new PaneFailure(texts.plan.forecastNoPlan);
   stopIfAsked(work, texts.work.nothingChanged);
@@ -139,13 +142,16 @@ export async function loadForecast(book: OpenWorkbook, prepared: Prepared, work:
   await untilCalculated(book, work, settled, texts.plan.forecastStopped);
   work.progress(texts.plan.forecastComparing);
   const after = await rereadPlan(book, before.at, work);
-  if ("shown" in after) return { changes: [], rows: 0, verdicts: 0, error: String(after.shown) };
+  const nothing = { changes: [], rows: 0, verdicts: 0, compared: false };
+  if ("shown" in after) return { ...nothing, error: String(after.shown) };
+  if (!before.cells) return { ...nothing, error: undefined };
   const changes = verdictsFirst(said(() => changeCells(before.cells, after.plan.cells)));
   const body = changes.slice(1);
   const outcome = {
     changes,
     rows: new Set(body.map((row) => JSON.stringify(row.slice(0, MOVED_COLUMN)))).size,
     verdicts: body.filter((row) => row[MOVED_COLUMN] === VERDICT).length,
+    compared: true,
     error: undefined,
   };
   stopIfAsked(work, texts.plan.forecastStopped);

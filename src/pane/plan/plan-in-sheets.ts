@@ -28,8 +28,14 @@ async function readFrom(book: OpenWorkbook, at: Place, work: Work): Promise<Plan
   return cells.length > 0 && KEYS.every((key) => cells[0]!.includes(key)) ? { at, cells } : undefined;
 }
 
-/** @returns the plan of the first sheet that holds one */
-export async function findPlan(book: OpenWorkbook, work: Work): Promise<PlanInSheets | undefined> {
+/** A formula that fills a sheet with a plan, whatever it shows now. */
+const PLAN_FORMULA = /\.PLAN\.TABLE\(/i;
+
+/** Where the plan of the first sheet that holds one begins; `cells` is missing where it shows an error instead. */
+export async function findPlan(
+  book: OpenWorkbook,
+  work: Work,
+): Promise<PlanInSheets | { readonly at: Place; readonly cells: undefined } | undefined> {
   for (const sheet of await book.sheetNames()) {
     stopIfAsked(work);
     const used = await book.usedArea(sheet);
@@ -39,12 +45,16 @@ export async function findPlan(book: OpenWorkbook, work: Work): Promise<PlanInSh
       rows: Math.min(used.rows, ROWS_SEARCHED),
       columns: Math.min(used.columns, COLUMNS_SEARCHED),
     };
-    const { values } = await book.read(top);
-    const row = values.findIndex((line) => KEYS.every((key) => line.includes(key)));
+    const { values, formulas } = await book.read(top);
+    const headings = values.findIndex((line) => KEYS.every((key) => line.includes(key)));
+    const isPlanFormula = (cell: unknown): boolean => PLAN_FORMULA.test(String(cell));
+    const row = headings >= 0 ? headings : formulas.findIndex((line) => line.some(isPlanFormula));
     if (row < 0) continue;
     // A plan has its own words for its columns, so the first filled cell of that row begins it.
-    const column = values[row]!.findIndex((cell) => cell !== "");
-    return readFrom(book, { sheet, row: used.row + row, column: used.column + column }, work);
+    const column =
+      headings >= 0 ? values[row]!.findIndex((cell) => cell !== "") : formulas[row]!.findIndex(isPlanFormula);
+    const at = { sheet, row: used.row + row, column: used.column + column };
+    return (await readFrom(book, at, work)) ?? { at, cells: undefined };
   }
   return undefined;
 }

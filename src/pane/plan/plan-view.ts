@@ -38,8 +38,9 @@ function previewText({ file, edit, users }: Prepared): string {
     : say(texts.plan.forecastPreviewShort, { file, matched, added, gone });
 }
 
-function outcomeText({ changes, rows, verdicts, error }: Outcome): string {
+function outcomeText({ changes, rows, verdicts, compared, error }: Outcome): string {
   if (error !== undefined) return say(texts.plan.forecastErrors, { error });
+  if (!compared) return texts.plan.forecastUncompared;
   const moved = changes.length - 1;
   if (moved === 0) return texts.plan.forecastUnmoved;
   const written = say(texts.plan.forecastWritten, { sheet: SHEETS.changes });
