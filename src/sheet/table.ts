@@ -113,26 +113,36 @@ export function readTable(cells: Cells, table: string, schema: Schema): TableRow
   const problems: Problem[] = [];
   const numbers = new Map<string, Float64Array>();
   const texts = new Map<string, string[]>();
-  const readers: ((cell: unknown, i: number, row: number) => void)[] = [];
-  const places: number[] = [];
+  const readers: Reader[] = [];
   for (const [name, column] of Object.entries(schema)) {
     const at = found.get(name);
     if (column.kind === "number") {
       const values = new Float64Array(count).fill(column.fallback ?? NaN);
-      if (at !== undefined) readers.push(numberReader(name, column, values, problems));
+      if (at !== undefined) readers.push(numberReader(at, name, column, values, problems));
       numbers.set(name, values);
     } else {
       const values = new Array<string>(count).fill(column.fallback ?? "");
-      if (at !== undefined) readers.push(textReader(name, column, values, problems));
+      if (at !== undefined) readers.push(textReader(at, name, column, values, problems));
       texts.set(name, values);
     }
-    if (at !== undefined) places.push(at);
   }
   // Row by row, since a long table is spread over memory by its rows.
   for (let i = 0; i < count; i++) {
     const row = rowNumbers[i]!;
     const line = cells[row - 1]!;
-    for (let k = 0; k < readers.length; k++) readers[k]!(line[places[k]!], i, row);
+    for (let k = 0; k < readers.length; k++) {
+      const { at, above, below, whole, numbers: values, read } = readers[k]!;
+      const cell = line[at];
+      if (
+        typeof cell === "number" &&
+        cell > above &&
+        cell < below &&
+        cell !== 0 &&
+        (!whole || Number.isInteger(cell))
+      ) {
+        values[i] = cell;
+      } else read(cell, i, row);
+    }
   }
   return {
     count,
@@ -144,16 +154,27 @@ export function readTable(cells: Cells, table: string, schema: Schema): TableRow
   };
 }
 
+/** One column on its way from cells to values: numbers well inside the domain are taken at once, all else is looked at. */
+interface Reader {
+  readonly at: number;
+  readonly above: number;
+  readonly below: number;
+  readonly whole: boolean;
+  readonly numbers: Float64Array;
+  readonly read: (cell: unknown, i: number, row: number) => void;
+}
+
 type NumberColumn = Extract<Column, { kind: "number" }>;
 
 function numberReader(
+  at: number,
   name: string,
   column: NumberColumn,
   values: Float64Array,
   problems: Problem[],
-): (cell: unknown, i: number, row: number) => void {
+): Reader {
   const zeroIsMissing = column.zeroIsBlank === true || !contains(column.domain, 0);
-  return (cell, i, row) => {
+  const read: Reader["read"] = (cell, i, row) => {
     if (typeof cell === "number" && contains(column.domain, cell) && !(cell === 0 && zeroIsMissing)) values[i] = cell;
     else if (cell === "" || isBlank(cell) || (cell === 0 && zeroIsMissing)) {
       if (!column.optional) problems.push({ row, column: name, message: `missing; allowed: ${allowedWords(column)}.` });
@@ -162,16 +183,21 @@ function numberReader(
       problems.push({ row, column: name, message: `${shown(cell)} is not allowed; allowed: ${allowedWords(column)}.` });
     }
   };
+  const { low, high, whole } = column.domain;
+  return { at, above: low, below: high, whole, numbers: values, read };
 }
 
+const NO_NUMBERS = new Float64Array(0);
+
 function textReader(
+  at: number,
   name: string,
   column: Exclude<Column, NumberColumn>,
   values: string[],
   problems: Problem[],
-): (cell: unknown, i: number, row: number) => void {
+): Reader {
   const words = column.kind === "choice" ? new Map(column.words.map((word) => [word.toLowerCase(), word])) : undefined;
-  return (cell, i, row) => {
+  const read: Reader["read"] = (cell, i, row) => {
     if (isBlank(cell) || cell === 0) {
       if (!column.optional) problems.push({ row, column: name, message: `missing; allowed: ${allowedWords(column)}.` });
       return;
@@ -183,6 +209,8 @@ function textReader(
     else
       problems.push({ row, column: name, message: `${shown(cell)} is not allowed; allowed: ${allowedWords(column)}.` });
   };
+  // No number is above infinity: every cell of a text column is looked at.
+  return { at, above: Infinity, below: -Infinity, whole: false, numbers: NO_NUMBERS, read };
 }
 
 function shown(cell: unknown): string {

@@ -283,6 +283,7 @@ export class Coverage {
     let by: Reach["by"] = "timing range";
     let interferenceMarginDb = 0;
     let judged = this.timingKm !== Infinity;
+    let tightestDb = Infinity;
     for (const direction of this.directions) {
       if (direction.eirpDbm === undefined) continue;
       const receiver = direction.receiver(load);
@@ -300,6 +301,9 @@ export class Coverage {
         this.lossesDb,
         this.shadowDb + rise,
       );
+      // The range grows with the loss that is borne, so that a direction that bears more never ends the reach.
+      if (lossDb >= tightestDb) continue;
+      tightestDb = lossDb;
       const reached = reachOf(lossDb, this.ranged(environment));
       if (reached === undefined || radiusKm === undefined || reached < radiusKm) {
         radiusKm = reached;

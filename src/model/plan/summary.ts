@@ -43,6 +43,7 @@ interface Totals {
   carriersRequired: number;
   carriersInstalled: number;
   blocked: number;
+  latest: string | undefined;
   readonly cells: Set<string>;
   readonly short: Set<string>;
   readonly uncovered: Set<string>;
@@ -58,6 +59,7 @@ function empty(): Totals {
     carriersRequired: 0,
     carriersInstalled: 0,
     blocked: 0,
+    latest: undefined,
     cells: new Set(),
     short: new Set(),
     uncovered: new Set(),
@@ -88,7 +90,11 @@ export function summarise(rows: Iterable<SummedRow>): SummaryRow[] {
     totals.carriersRequired += row.carriersRequired;
     totals.carriersInstalled += row.carriersInstalled;
     if (!Number.isNaN(row.blocking)) totals.blocked += row.blocking * row.callTrafficE;
-    totals.cells.add(row.cell);
+    // The rows of a cell mostly follow each other.
+    if (row.cell !== totals.latest) {
+      totals.cells.add(row.cell);
+      totals.latest = row.cell;
+    }
     if (!row.capacityMet) totals.short.add(row.cell);
     if (!row.coverageMet) totals.uncovered.add(row.cell);
   }
