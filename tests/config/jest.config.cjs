@@ -3,6 +3,8 @@ module.exports = {
   rootDir: "../..",
   testMatch: ["<rootDir>/tests/**/*.test.ts"],
   testEnvironment: "node",
+  // A slow machine is no failure: no test asserts a time.
+  testTimeout: 60_000,
   transform: {
     "\\.csv$": "<rootDir>/tests/config/text-transform.cjs",
     "\\.ts$": [
