@@ -68,14 +68,19 @@ export function writeManifest(root, version, choices = {}) {
 
 function main() {
   const { values } = parseArgs({
-    options: { url: { type: "string" }, environment: { type: "string" }, "office-js": { type: "string" } },
+    options: {
+      url: { type: "string" },
+      environment: { type: "string" },
+      env: { type: "string" },
+      "office-js": { type: "string" },
+    },
   });
   const root = join(fileURLToPath(import.meta.url), "../../..");
   if (!existsSync(join(root, "dist", "functions.json"))) throw new Error("dist/ is empty; run npm run build first.");
   const { version } = JSON.parse(readFileSync(join(root, "package.json"), "utf8"));
   const written = writeManifest(root, version, {
     url: values.url,
-    environment: values.environment,
+    environment: values.env ?? values.environment,
     officeJs: values["office-js"],
   });
   console.log(`Wrote to dist/: ${written.join(", ")}.`);
