@@ -220,10 +220,12 @@ function clear(formulas: readonly Formula[]): void {
     cell.result = undefined;
     if (!formula.dynamic) continue;
     for (let r = row; r < row + rows; r++) {
+      const line = sheet.findRow(r);
+      if (!line) continue;
       for (let c = column; c < column + columns; c++) {
-        if (anchors.has(`${sheet.name}!${keyOf(r, c)}`)) continue;
-        const ghost = sheet.findCell(r, c);
-        if (ghost && ghost.value !== null) ghost.value = null;
+        const ghost = line.findCell(c);
+        if (!ghost || ghost.value === null || anchors.has(`${sheet.name}!${keyOf(r, c)}`)) continue;
+        ghost.value = null;
       }
     }
   }
@@ -278,28 +280,46 @@ function valueOf(raw: unknown): Value {
   return code === undefined ? null : new CellError(code as CellError["code"], "");
 }
 
-function valuesOf(formulas: readonly Formula[]): Map<string, Map<string, Calculated>> {
+/** What one formula answers: the values of the range that it fills, row by row. */
+interface Answer {
+  readonly rows: number;
+  readonly columns: number;
+  readonly values: readonly Value[];
+}
+
+function answersOf(formulas: readonly Formula[]): Answer[] {
+  return formulas.map(({ sheet, cell, row, column, rows, columns, dynamic }) => {
+    const values = [valueOf(cell.result)];
+    if (!dynamic) return { rows, columns, values };
+    for (let r = row; r < row + rows; r++) {
+      const line = sheet.findRow(r);
+      for (let c = column; c < column + columns; c++) {
+        if (r !== row || c !== column) values.push(valueOf(line?.findCell(c)?.value));
+      }
+    }
+    return { rows, columns, values };
+  });
+}
+
+/** The answers as cells. */
+function cellsOf(formulas: readonly Formula[], answers: readonly Answer[]): Map<string, Map<string, Calculated>> {
   const sheets = new Map<string, Map<string, Calculated>>();
-  for (const { sheet, cell, row, column, rows, columns, dynamic } of formulas) {
+  formulas.forEach(({ sheet, row, column, dynamic }, i) => {
+    const { rows, columns, values } = answers[i]!;
     let cells = sheets.get(sheet.name);
     if (!cells) {
       cells = new Map();
       sheets.set(sheet.name, cells);
     }
-    const value = valueOf(cell.result);
     const ref =
       rows * columns > 1
         ? `${addressOf(row, column)}:${addressOf(row + rows - 1, column + columns - 1)}`
         : addressOf(row, column);
-    cells.set(keyOf(row, column), dynamic ? { value, ref } : { value });
-    if (!dynamic) continue;
-    for (let r = row; r < row + rows; r++) {
-      for (let c = column; c < column + columns; c++) {
-        if (r === row && c === column) continue;
-        cells.set(keyOf(r, c), { value: valueOf(sheet.findCell(r, c)?.value) });
-      }
+    cells.set(keyOf(row, column), dynamic ? { value: values[0]!, ref } : { value: values[0]! });
+    for (let k = 1; k < values.length; k++) {
+      cells.set(keyOf(row + Math.floor(k / columns), column + (k % columns)), { value: values[k]! });
     }
-  }
+  });
   return sheets;
 }
 
@@ -310,16 +330,12 @@ function sameValue(a: Value, b: Value): boolean {
   return a === b;
 }
 
-function settled(before: ReturnType<typeof valuesOf>, after: ReturnType<typeof valuesOf>): boolean {
-  for (const [sheet, cells] of after) {
-    const old = before.get(sheet);
-    if (!old || old.size !== cells.size) return false;
-    for (const [key, { value }] of cells) {
-      const was = old.get(key);
-      if (!was || !sameValue(was.value, value)) return false;
-    }
-  }
-  return true;
+function settled(before: readonly Answer[], after: readonly Answer[]): boolean {
+  if (before.length !== after.length) return false;
+  return after.every(({ rows, columns, values }, i) => {
+    const was = before[i]!;
+    return was.rows === rows && was.columns === columns && values.every((value, k) => sameValue(was.values[k]!, value));
+  });
 }
 
 /**
@@ -342,9 +358,9 @@ export function calculate(book: Book, functions: FunctionTable): Outcome {
   const at = new Map(
     formulas.map((formula) => [`${formula.sheet.name.toLowerCase()}!${keyOf(formula.row, formula.column)}`, formula]),
   );
-  const oldGhosts = valuesOf(formulas);
+  const oldAreas = formulas.map(({ sheet, row, column, rows, columns }) => ({ sheet, row, column, rows, columns }));
   const names = namedAreas(book);
-  let before: ReturnType<typeof valuesOf> = new Map();
+  let before: readonly Answer[] = [];
   for (let pass = 1; ; pass++) {
     if (pass > MOST_PASSES)
       throw new WorkbookFailure("the workbook's values never settle; its formulas change each other.");
@@ -370,17 +386,23 @@ export function calculate(book: Book, functions: FunctionTable): Outcome {
         `sheet ${unresolved.sheet.name}, cell ${addressOf(unresolved.row, unresolved.column)}: the formula cannot be calculated here.`,
       );
     }
-    const after = valuesOf(formulas);
+    const after = answersOf(formulas);
     if (settled(before, after)) break;
     before = after;
   }
+  const cells = cellsOf(formulas, before);
   // Cells that an old spill filled and the new one does not are empty now.
-  for (const [sheet, cells] of oldGhosts) {
-    const now = before.get(sheet)!;
-    for (const key of cells.keys()) if (!now.has(key)) now.set(key, { value: null });
+  for (const { sheet, row, column, rows, columns } of oldAreas) {
+    const now = cells.get(sheet.name)!;
+    for (let r = row; r < row + rows; r++) {
+      for (let c = column; c < column + columns; c++) {
+        const key = keyOf(r, c);
+        if (!now.has(key)) now.set(key, { value: null });
+      }
+    }
   }
   return {
-    cells: before,
+    cells,
     messages: [...messages.values()].sort((a, b) => b.count - a.count),
     formulas: formulas.length,
   };
