@@ -200,7 +200,8 @@ function takeFlag(labels: Argument | undefined): boolean | CellError {
 }
 
 function padded(rows: CellValue[][]): CellValue[][] {
-  const width = Math.max(...rows.map((row) => row.length));
+  // A whole column of answers is longer than an argument list may be.
+  const width = rows.reduce((widest, row) => Math.max(widest, row.length), 0);
   return rows.map((row) =>
     row.length === width ? row : [...row, ...new Array<CellValue>(width - row.length).fill("")],
   );

@@ -387,6 +387,12 @@ describe("several answers", () => {
     ]);
     expect(perCellRow(both, names, { a: number(column(2), finite) }, flag([[true]]))).toEqual([names, [2, 4]]);
   });
+  test("a whole column of rows of answers is no too long argument list", () => {
+    const cells: Cells = Array.from({ length: 300_000 }, (_, i) => [i + 1]);
+    const out = perCellRow(both, names, { a: number(cells, finite) });
+    expect(out).toHaveLength(300_000);
+    expect(out[299_999]).toEqual([300_000, 9e10]);
+  });
   test("spill downwards from a row", () => {
     expect(perCellRow(both, names, { a: number([[2, 3]], finite) }, flag([[true]]))).toEqual([
       ["one", 2, 3],
