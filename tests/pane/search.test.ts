@@ -19,7 +19,7 @@ test.each(texts.find.questions.map(({ ask, functions }) => [ask, functions] as c
 );
 
 test.each([
-  ["trunks for 20 erlang", "ERLANGB.CHANNELS", 1],
+  ["trunks for 20 erlang", "ERLANGB.CHANNELS", 3],
   ["grade of service", "ERLANGB.BLOCKING", 1],
   ["gos", "ERLANGB.BLOCKING", 3],
   ["blockng", "ERLANGB.BLOCKING", 1],
