@@ -38,15 +38,16 @@ export function mount(
   const jobs = new Jobs();
   const around: Around = { ...parts, namespace: installation.namespace, jobs };
   const finder = new FinderView(around);
+  const tabs = [
+    { id: "find", title: texts.tabs.find, panel: finder.element },
+    { id: "plan", title: texts.tabs.plan, panel: planView(around) },
+    { id: "check", title: texts.tabs.check, panel: checkView(around) },
+  ];
   const main = h(
     "main",
     {},
     notice === undefined ? undefined : h("p", { class: "notice", role: "note" }, notice),
-    ...tabList(texts.tabs.label, [
-      { id: "find", title: texts.tabs.find, panel: finder.element },
-      { id: "plan", title: texts.tabs.plan, panel: planView(around) },
-      { id: "check", title: texts.tabs.check, panel: checkView(around) },
-    ]),
+    ...tabList(texts.tabs.label, tabs, () => jobs.forget()),
   );
   replaceChildren(root, header(installation), main, jobs.element);
   document.addEventListener("keydown", (event) => {

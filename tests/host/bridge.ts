@@ -21,7 +21,11 @@ interface Parameter {
 }
 
 export interface Metadata {
-  readonly functions: readonly { readonly id: string; readonly parameters: readonly Parameter[] }[];
+  readonly functions: readonly {
+    readonly id: string;
+    readonly parameters: readonly Parameter[];
+    readonly options?: Readonly<Record<string, unknown>>;
+  }[];
 }
 
 /** Error numbers of the bridge's failure messages. */

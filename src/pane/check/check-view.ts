@@ -48,11 +48,11 @@ function summary(scan: Scan, namespace: string): string {
   const { sheets, cells, formulas, own, errors, roots } = scan;
   return errors.length === 0
     ? say(texts.check.clean, { cells, sheets, formulas, own, namespace })
-    : sayCount(texts.check.found, errors.length, { sheets, roots: roots.length });
+    : `${sayCount(texts.check.found, errors.length)} ${sayCount(texts.check.begin, roots.length)}`;
 }
 
 async function report(scan: Scan, book: OpenWorkbook, around: Around): Promise<Child[]> {
-  const external = scan.external > 0 ? h("p", {}, say(texts.check.external, { count: scan.external })) : undefined;
+  const external = scan.external > 0 ? h("p", {}, sayCount(texts.check.external, scan.external)) : undefined;
   if (scan.errors.length === 0) return [external];
   const listed = scan.roots.slice(0, MOST_LISTED);
   const items: HTMLElement[] = [];

@@ -7,17 +7,13 @@ const MOST_SHOWN = 60;
 /** @param changes cell, year, scheme, column, before, after, change; headings first */
 export function changesTable(changes: readonly (readonly unknown[])[]): HTMLElement {
   const { plan } = texts;
-  const headings = [
-    plan.changesCell,
-    plan.changesYear,
-    plan.changesScheme,
-    plan.changesColumn,
-    plan.changesBefore,
-    plan.changesAfter,
-  ];
+  const headings = [plan.changesWhere, plan.changesColumn, plan.changesMoved];
   const rows = changes.slice(1, 1 + MOST_SHOWN);
-  const cells = (row: readonly unknown[]): string[] =>
-    headings.map((_, c) => (c === 1 ? String(row[c]) : shownValue(row[c])));
+  const cells = ([cell, year, scheme, column, before, after]: readonly unknown[]): string[] => [
+    `${String(cell)}, ${String(year)}, ${String(scheme)}`,
+    String(column),
+    `${shownValue(before)} → ${shownValue(after)}`,
+  ];
   return h(
     "div",
     { class: "scroll", role: "region", tabindex: 0, "aria-label": plan.forecastTitle },

@@ -43,8 +43,12 @@ function outcomeText({ changes, rows, verdicts, compared, error }: Outcome): str
   if (!compared) return texts.plan.forecastUncompared;
   const moved = changes.length - 1;
   if (moved === 0) return texts.plan.forecastUnmoved;
-  const written = say(texts.plan.forecastWritten, { sheet: SHEETS.changes });
-  return `${sayCount(texts.plan.forecastDone, moved, { rows, verdicts })} ${written}`;
+  return [
+    sayCount(texts.plan.forecastDone, moved),
+    sayCount(texts.plan.forecastRows, rows),
+    verdicts === 0 ? texts.plan.forecastNoVerdicts : sayCount(texts.plan.forecastVerdicts, verdicts),
+    say(texts.plan.forecastWritten, { sheet: SHEETS.changes }),
+  ].join(" ");
 }
 
 class ForecastSection {

@@ -56,6 +56,11 @@ export class Jobs {
     this.told.hidden = false;
   }
 
+  /** Takes the last outcome away once it is no longer of interest. */
+  forget(): void {
+    this.told.hidden = true;
+  }
+
   private tellFault(fault: unknown): void {
     if (fault instanceof Stopped) {
       this.tell(say(texts.work.stopped, { what: fault.what ?? texts.work.nothingChanged }), "stopped");

@@ -7,21 +7,26 @@ export interface Tab {
   readonly panel: HTMLElement;
 }
 
-export function tabList(label: string, tabs: readonly Tab[]): HTMLElement[] {
+/** @param chosen told whenever a person chooses a tab */
+export function tabList(label: string, tabs: readonly Tab[], chosen: () => void): HTMLElement[] {
   const buttons = tabs.map(({ id, title }) =>
     h(
       "button",
-      { type: "button", role: "tab", id: `tab-${id}`, "aria-controls": `panel-${id}`, onclick: () => choose(id) },
+      { type: "button", role: "tab", id: `tab-${id}`, "aria-controls": `panel-${id}`, onclick: () => select(id) },
       title,
     ),
   );
-  const choose = (chosen: string): void => {
+  const show = (shown: string): void => {
     tabs.forEach(({ id, panel }, i) => {
       const button = buttons[i]!;
-      button.setAttribute("aria-selected", String(id === chosen));
-      button.tabIndex = id === chosen ? 0 : -1;
-      panel.hidden = id !== chosen;
+      button.setAttribute("aria-selected", String(id === shown));
+      button.tabIndex = id === shown ? 0 : -1;
+      panel.hidden = id !== shown;
     });
+  };
+  const select = (id: string): void => {
+    show(id);
+    chosen();
   };
   const STEPS: Readonly<Record<string, (at: number) => number>> = {
     ArrowRight: (at) => (at + 1) % tabs.length,
@@ -39,7 +44,7 @@ export function tabList(label: string, tabs: readonly Tab[]): HTMLElement[] {
         if (!step) return;
         event.preventDefault();
         const next = step(buttons.findIndex((button) => button === document.activeElement));
-        choose(tabs[next]!.id);
+        select(tabs[next]!.id);
         buttons[next]!.focus();
       },
     },
@@ -50,6 +55,6 @@ export function tabList(label: string, tabs: readonly Tab[]): HTMLElement[] {
     panel.setAttribute("role", "tabpanel");
     panel.setAttribute("aria-labelledby", `tab-${id}`);
   }
-  choose(tabs[0]!.id);
+  show(tabs[0]!.id);
   return [list, ...tabs.map(({ panel }) => panel)];
 }

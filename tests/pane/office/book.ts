@@ -197,7 +197,12 @@ export class Book {
     if (this.broken !== undefined) return [[{ error: this.broken }]];
     const entry = this.functions[call.name.slice(this.namespace.length + 1)];
     if (!entry) return [[{ error: "#NAME?" }]];
-    const args = call.args.map((argument) => this.argument(argument, sheet));
+    const args: ((Scalar | ErrorValue | null)[][] | null)[] = [];
+    for (const argument of call.args) {
+      const cells = this.argument(argument, sheet);
+      if (cells === undefined) return undefined;
+      args.push(cells);
+    }
     while (args.length < entry.parameters.length) args.push(null);
     const failed = args.flatMap((arg) => arg?.flat() ?? []).find(isErrorValue);
     if (failed) return [[failed]];
@@ -211,10 +216,11 @@ export class Book {
     );
   }
 
-  private argument(argument: Argument, sheet: string): (Scalar | ErrorValue | null)[][] | null {
+  /** Cells of an argument; undefined for one that is not computed here. */
+  private argument(argument: Argument, sheet: string): (Scalar | ErrorValue | null)[][] | null | undefined {
     if (argument.kind === "value") return argument.value === null ? null : [[argument.value]];
     if (argument.kind === "array") return argument.rows.map((row) => [...row]);
-    if (argument.kind === "other") return [[{ error: "#VALUE!" }]];
+    if (argument.kind === "other") return this.evaluate(`=${argument.text}`, sheet);
     const direct = areaOf(argument.sheet ?? sheet, argument.range);
     const area = direct ? (argument.spill ? this.spilledArea(direct) : direct) : this.names.get(argument.range);
     if (!area) return [[{ error: "#NAME?" }]];

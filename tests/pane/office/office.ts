@@ -4,7 +4,7 @@ import { Program, USUAL, type Behaviour } from "./excel";
 import { Book } from "./book";
 
 export { Book } from "./book";
-export { USUAL, type Behaviour, type Program } from "./excel";
+export { Program, USUAL, type Behaviour } from "./excel";
 
 /** The global `Office` of a program. */
 export function officeOf(program: Program, theme?: string): unknown {
