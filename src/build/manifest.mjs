@@ -70,7 +70,6 @@ function main() {
   const { values } = parseArgs({
     options: {
       url: { type: "string" },
-      environment: { type: "string" },
       env: { type: "string" },
       "office-js": { type: "string" },
     },
@@ -80,7 +79,7 @@ function main() {
   const { version } = JSON.parse(readFileSync(join(root, "package.json"), "utf8"));
   const written = writeManifest(root, version, {
     url: values.url,
-    environment: values.env ?? values.environment,
+    environment: values.env,
     officeJs: values["office-js"],
   });
   console.log(`Wrote to dist/: ${written.join(", ")}.`);

@@ -52,7 +52,7 @@ function httpsAddress(option, text) {
  */
 export function settingsOf({ url = LOCAL_URL, environment = "development", officeJs = OFFICE_JS }) {
   if (!Object.hasOwn(ENVIRONMENTS, environment)) {
-    throw new Error(`--environment is "${environment}"; allowed: ${Object.keys(ENVIRONMENTS).join(", ")}.`);
+    throw new Error(`--env is "${environment}"; allowed: ${Object.keys(ENVIRONMENTS).join(", ")}.`);
   }
   const address = httpsAddress("--url", url);
   const base = address.href.replace(/\/+$/, "");

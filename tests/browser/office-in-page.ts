@@ -13,7 +13,7 @@ declare global {
 const onPage = (): PageFunctions["functionTable"] => globalThis.capacityFunctions?.functionTable ?? {};
 
 /** functions.js loads after Office.js, so its table is looked up when it is needed. */
-const functions = new Proxy({} as PageFunctions["functionTable"], {
+const functions = new Proxy({}, {
   get: (_, id: string) => onPage()[id],
   ownKeys: () => Object.keys(onPage()),
   getOwnPropertyDescriptor: (_, id) => Object.getOwnPropertyDescriptor(onPage(), id),

@@ -124,7 +124,7 @@ describe.each(CASES)("$environment at $url", ({ environment, url, namespace }) =
   let xml: Element;
   let json: any;
   beforeAll(() => {
-    make("--url", url, "--environment", environment);
+    make("--url", url, "--env", environment);
     xml = parseXml(output("manifest.xml"));
     json = JSON.parse(output("manifest.json"));
   });
@@ -264,7 +264,7 @@ test("functions.json fits the definition of custom functions, and a wrong one do
 });
 
 test("the two environments share neither id nor namespace", () => {
-  make("--environment", "production", "--url", "https://planning.example");
+  make("--env", "production", "--url", "https://planning.example");
   const production = output("manifest.xml");
   make();
   const development = output("manifest.xml");
@@ -334,8 +334,8 @@ test.each([
   [["--url", "http://planning.example"], "--url"],
   [["--url", "https://planning.example/?a=1"], "--url"],
   [["--url", "planning"], "--url"],
-  [["--environment", "staging"], "--environment"],
-  [["--environment", "toString"], "--environment"],
+  [["--env", "staging"], "--env"],
+  [["--env", "toString"], "--env"],
   [["--office-js", "http://mirror.example/office.js"], "--office-js"],
   [["--office-js", "https://mirror.example/other.js"], "--office-js"],
 ])("%j is refused in one line that names the option", (args, option) => {
