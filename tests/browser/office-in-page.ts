@@ -13,11 +13,14 @@ declare global {
 const onPage = (): PageFunctions["functionTable"] => globalThis.capacityFunctions?.functionTable ?? {};
 
 /** functions.js loads after Office.js, so its table is looked up when it is needed. */
-const functions = new Proxy({}, {
-  get: (_, id: string) => onPage()[id],
-  ownKeys: () => Object.keys(onPage()),
-  getOwnPropertyDescriptor: (_, id) => Object.getOwnPropertyDescriptor(onPage(), id),
-});
+const functions = new Proxy(
+  {},
+  {
+    get: (_, id: string) => onPage()[id],
+    ownKeys: () => Object.keys(onPage()),
+    getOwnPropertyDescriptor: (_, id) => Object.getOwnPropertyDescriptor(onPage(), id),
+  },
+);
 
 const { theme, ...changes } = window.behaviour ?? {};
 const namespace = document.documentElement.dataset["namespace"]!;

@@ -103,6 +103,7 @@ class ForecastSection {
       const outcome = await loadForecast(this.book, prepared, work);
       replaceChildren(this.preview);
       replaceChildren(this.result, outcome.changes.length > 1 ? changesTable(outcome.changes) : undefined, undo);
+      this.result.scrollIntoView({ block: "nearest" });
       return outcomeText(outcome);
     });
   }
